@@ -1,0 +1,106 @@
+import { chooseVector, type Point, subtract, type Vector } from '../geometry/index.ts';
+import { LENGTH, NONE } from '../quantity/index.ts';
+import { Condition, guard, Refusal, type Scalar, say } from '../tape/index.ts';
+import { type Arch, axisLength, crownStart } from './arch.ts';
+
+/** A place on the axis of an arch. */
+export interface Place {
+  /** Distance along the axis from the left springing. */
+  readonly along: Scalar;
+  readonly point: Point;
+  /** Direction of the axis there, from left to right, of length 1. */
+  readonly direction: Vector;
+  /** The segment it lies in, where that is known while tracing and not only when the tape runs. */
+  readonly segment?: number;
+}
+
+/** The place at a ratio of the way along a segment, which is numbered from 0. */
+export function placeOnSegment(arch: Arch, segment: number, ratio: Scalar): Place {
+  const found = arch.segments[segment];
+  const start = arch.starts[segment];
+  if (found === undefined || start === undefined) {
+    throw new Refusal(
+      'no-segment',
+      `the axis has ${arch.segments.length} segments: there is no ${segment + 1}`,
+    );
+  }
+  const along = start.plus(found.length.times(ratio));
+  return { along, point: found.pointAt(ratio), direction: found.directionAt(ratio), segment };
+}
+
+/** The place at a distance along the axis from the left springing, with a query beyond its ends. */
+export function placeAlong(arch: Arch, distanceAlong: Scalar): Place {
+  const total = axisLength(arch);
+  const slack = total.times(1e-12);
+  const beyond = distanceAlong.minus(total).most(distanceAlong.negated());
+  const along = guard(
+    distanceAlong,
+    beyond.atMost(slack),
+    say(
+      'beyond-axis',
+    )`The station lies ${beyond} beyond the end of the axis, which is ${total} long: bring it back onto the axis`,
+  );
+  const candidates = arch.segments.map((segment, i) => {
+    const start = arch.starts[i] as Scalar;
+    const ratio = along.minus(start).over(segment.length).most(0).least(1);
+    return { start, point: segment.pointAt(ratio), direction: segment.directionAt(ratio) };
+  });
+  const [first, ...others] = candidates;
+  if (first === undefined) throw new Error('an axis has segments');
+  let { point, direction } = first;
+  for (const { start, point: p, direction: d } of others) {
+    const here = along.above(start);
+    point = chooseVector(here, p, point);
+    direction = chooseVector(here, d, direction);
+  }
+  return { along, point, direction };
+}
+
+/** The place of the axis that is nearest to a point, and how far that is. */
+export function placeNearest(arch: Arch, point: Point): { readonly place: Place; readonly off: Scalar } {
+  const candidates = arch.segments.map((segment, i) => {
+    const ratio = segment.nearest(point);
+    const at = segment.pointAt(ratio);
+    const { x, y } = subtract(point, at);
+    return {
+      square: x.squared().plus(y.squared()),
+      along: (arch.starts[i] as Scalar).plus(segment.length.times(ratio)),
+      point: at,
+      direction: segment.directionAt(ratio),
+    };
+  });
+  const [first, ...others] = candidates;
+  if (first === undefined) throw new Error('an axis has segments');
+  let best = first;
+  for (const other of others) {
+    const nearer = other.square.below(best.square);
+    best = {
+      square: nearer.choose(other.square, best.square),
+      along: nearer.choose(other.along, best.along),
+      point: chooseVector(nearer, other.point, best.point),
+      direction: chooseVector(nearer, other.direction, best.direction),
+    };
+  }
+  const { square, ...place } = best;
+  // The slope of a root is unbounded at 0, which is where a load on the axis stands.
+  const away = square.above(0);
+  const one = square.trace.constant(1, square.dimension);
+  const off = away.choose(away.choose(square, one).squareRoot(), square.trace.constant(0, LENGTH));
+  return { place, off };
+}
+
+/** Whether one place comes before another, walking from the left springing. Known while tracing if segments tell. */
+export function isBefore(a: Place, b: Place): Condition {
+  if (a.segment !== undefined && b.segment !== undefined && a.segment !== b.segment) {
+    return new Condition(a.along.trace.constant(a.segment < b.segment ? 1 : 0, NONE));
+  }
+  return a.along.below(b.along);
+}
+
+/** Whether a place belongs to the left half. The crown hinge itself counts as its end. */
+export function isLeft(arch: Arch, place: Place): Condition {
+  if (place.segment !== undefined) {
+    return new Condition(place.along.trace.constant(place.segment < arch.leftSegments ? 1 : 0, NONE));
+  }
+  return place.along.atMost(crownStart(arch));
+}
