@@ -13,6 +13,19 @@ export { type ArchMoment, archMoment } from './archMoment.ts';
 export { type InternalForces, internalForces, type Reactions, reactions } from './equilibrium.ts';
 export { type PlacedLoad, type PointLoad, placeLoads, type Resultant, resultant } from './load.ts';
 export { type Mechanism, releaseMoment } from './mechanism.ts';
-export { isBefore, isLeft, type Place, placeAlong, placeNearest, placeOnSegment } from './place.ts';
+export {
+  isBefore,
+  isLeft,
+  kneePlace,
+  type Place,
+  placeAlong,
+  placeNearest,
+  placeOnSegment,
+} from './place.ts';
 export { AT_HINGE, DEAD_POINT, HINGES_IN_LINE, OFF_AXIS, UNMOVED } from './tolerance.ts';
-export { type PerturbedState, type VirtualWorkMoment, virtualWorkMoment } from './virtualWork.ts';
+export {
+  negligibleDisplacement,
+  type PerturbedState,
+  type VirtualWorkMoment,
+  virtualWorkMoment,
+} from './virtualWork.ts';

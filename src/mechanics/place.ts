@@ -28,6 +28,19 @@ export function placeOnSegment(arch: Arch, segment: number, ratio: Scalar): Plac
   return { along, point: found.pointAt(ratio), direction: found.directionAt(ratio), segment };
 }
 
+/** The place at a knee, counted from 1 at the left springing: the end of the segment to its left. */
+export function kneePlace(arch: Arch, knee: number): Place {
+  const ends = arch.segments.length - 1;
+  const knees = Array.from({ length: ends }, (_, i) => i).filter((i) => i !== arch.leftSegments - 1);
+  const segment = knees[knee - 1];
+  if (segment === undefined) {
+    const has = knees.length === 0 ? 'no knee' : knees.length === 1 ? 'one knee' : `${knees.length} knees`;
+    throw new Refusal('no-knee', `the axis has ${has}: there is no knee ${knee}`);
+  }
+  const { x } = arch.left;
+  return placeOnSegment(arch, segment, x.trace.constant(1, NONE));
+}
+
 /** The place at a distance along the axis from the left springing, with a query beyond its ends. */
 export function placeAlong(arch: Arch, distanceAlong: Scalar): Place {
   const total = axisLength(arch);

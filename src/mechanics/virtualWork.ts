@@ -1,6 +1,7 @@
 import { dot, type Point, subtract, type Vector } from '../geometry/index.ts';
 import { LENGTH, MOMENT } from '../quantity/index.ts';
-import { derivative, guard, Refusal, type Scalar, say, substitute, sum } from '../tape/index.ts';
+import { derivative, guard, Refusal, type Scalar, say, substitute, sum, type Trace } from '../tape/index.ts';
+import { UNMOVED } from './tolerance.ts';
 
 /** What a released and perturbed mechanism is, so far as virtual work is concerned. */
 export interface PerturbedState {
@@ -81,6 +82,20 @@ export function virtualWorkMoment(state: PerturbedState): VirtualWorkMoment {
   const along = loads.map(({ force }, i) => perUnitForce(works[i] as Scalar, force));
   const rates = derivative(along, perturbation, 0);
   return { limit, finite, along, rates };
+}
+
+/**
+ * A displacement that counts as none among loads: a share of how far they lie apart, or of a metre where that is
+ * less.
+ */
+export function negligibleDisplacement(loads: readonly { readonly at: Point }[], trace: Trace): Scalar {
+  let reach = trace.constant(1, LENGTH);
+  const [first, ...others] = loads;
+  for (const { at } of others) {
+    const { x, y } = subtract(at, (first as { at: Point }).at);
+    reach = reach.most(x.absolute()).most(y.absolute());
+  }
+  return reach.times(UNMOVED);
 }
 
 /** Below this rate of change the angle is taken not to change at all; a mechanism's is of the order of 1. */
