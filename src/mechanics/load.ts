@@ -45,8 +45,10 @@ export interface Resultant {
 }
 
 /**
- * The resultant, about a point, of those loads for which a condition holds. Prefixes of equal conditions are
- * shared by the trace, so that the stations of one segment cost little more than one.
+ * The resultant, about a point, of those loads for which a condition holds.
+ *
+ * Loads of which that is known while tracing are summed first: that sum is the same for all stations of a
+ * segment, and so is computed once.
  */
 export function resultant(
   loads: readonly PlacedLoad[],
@@ -54,20 +56,21 @@ export function resultant(
   which: (load: PlacedLoad) => Condition,
 ): Resultant {
   const { trace } = about.x;
-  const zero = { force: trace.constant(0, FORCE), moment: trace.constant(0, MOMENT) };
-  const parts = loads.map((load) => {
-    const counted = which(load).scalar;
-    return {
-      x: load.force.x.times(counted),
-      y: load.force.y.times(counted),
-      moment: cross(subtract(load.at, about), load.force).times(counted),
-    };
-  });
+  const counted = loads.map((load) => ({ load, share: which(load).scalar }));
+  const isKnown = ({ share }: { readonly share: Scalar }) => trace.constantAt(share.index) !== undefined;
+  const parts = [...counted.filter(isKnown), ...counted.filter((one) => !isKnown(one))].map(
+    ({ load, share }) => ({
+      x: load.force.x.times(share),
+      y: load.force.y.times(share),
+      moment: cross(subtract(load.at, about), load.force).times(share),
+    }),
+  );
+  const [noForce, noMoment] = [trace.constant(0, FORCE), trace.constant(0, MOMENT)];
   return {
     force: {
-      x: sum([zero.force, ...parts.map(({ x }) => x)]),
-      y: sum([zero.force, ...parts.map(({ y }) => y)]),
+      x: sum([noForce, ...parts.map(({ x }) => x)]),
+      y: sum([noForce, ...parts.map(({ y }) => y)]),
     },
-    moment: sum([zero.moment, ...parts.map(({ moment }) => moment)]),
+    moment: sum([noMoment, ...parts.map(({ moment }) => moment)]),
   };
 }

@@ -1,4 +1,5 @@
-import { registerCount, STRIDE, type Tape } from './tape.ts';
+import { scheduleOf } from './schedule.ts';
+import { registerCount, type Tape } from './tape.ts';
 
 /** Registers for runs of a tape, the constants in their places. */
 export function registersFor(tape: Tape): Float64Array {
@@ -14,84 +15,88 @@ export function registersFor(tape: Tape): Float64Array {
  * @param registers from `registersFor` this tape; they hold every result afterwards.
  */
 export function run(tape: Tape, inputs: ArrayLike<number>, registers: Float64Array): void {
-  const { code } = tape;
-  const inputCount = tape.inputs.length;
-  if (inputs.length !== inputCount) {
-    throw new RangeError(`the tape has ${inputCount} inputs, not ${inputs.length}`);
+  if (inputs.length !== tape.inputs.length) {
+    throw new RangeError(`the tape has ${tape.inputs.length} inputs, not ${inputs.length}`);
   }
   registers.set(inputs);
+  const { series, result: out, first: a, second: b, third: c } = scheduleOf(tape);
   const r = registers;
-  let result = inputCount + tape.constants.length;
-  for (let at = 0; at < code.length; at += STRIDE, result++) {
-    const a = r[code[at + 1] as number] as number;
-    const second = code[at + 2] as number;
-    let value: number;
-    // Literal numbers, in the order of `Op`, let the engine make one jump of the switch.
-    switch (code[at]) {
+  let i = 0;
+  for (let s = 0; s < series.length; s += 2) {
+    const end = series[s + 1] as number;
+    // Literal numbers in the order of `Op`; the conformance tests hold them to the table of operations. Every
+    // index is right by construction: a schedule names only registers that there are.
+    switch (series[s]) {
       case 3:
-        value = a + (r[second] as number);
+        for (; i < end; i++) r[out[i]!] = r[a[i]!]! + r[b[i]!]!;
         break;
       case 4:
-        value = a - (r[second] as number);
+        for (; i < end; i++) r[out[i]!] = r[a[i]!]! - r[b[i]!]!;
         break;
       case 5:
-        value = a * (r[second] as number);
+        for (; i < end; i++) r[out[i]!] = r[a[i]!]! * r[b[i]!]!;
         break;
       case 6:
-        value = a / (r[second] as number);
+        for (; i < end; i++) r[out[i]!] = r[a[i]!]! / r[b[i]!]!;
         break;
       case 7:
-        value = -a;
+        for (; i < end; i++) r[out[i]!] = -r[a[i]!]!;
         break;
       case 8:
-        value = Math.abs(a);
+        for (; i < end; i++) r[out[i]!] = Math.abs(r[a[i]!]!);
         break;
       case 9:
-        value = Math.sqrt(a);
+        for (; i < end; i++) r[out[i]!] = Math.sqrt(r[a[i]!]!);
         break;
       case 10:
-        value = Math.sin(a);
+        for (; i < end; i++) r[out[i]!] = Math.sin(r[a[i]!]!);
         break;
       case 11:
-        value = Math.cos(a);
+        for (; i < end; i++) r[out[i]!] = Math.cos(r[a[i]!]!);
         break;
       case 12:
-        value = Math.atan2(a, r[second] as number);
+        for (; i < end; i++) r[out[i]!] = Math.atan2(r[a[i]!]!, r[b[i]!]!);
         break;
       case 13:
-        value = Math.exp(a);
+        for (; i < end; i++) r[out[i]!] = Math.exp(r[a[i]!]!);
         break;
       case 14:
-        value = Math.log(a);
+        for (; i < end; i++) r[out[i]!] = Math.log(r[a[i]!]!);
         break;
       case 15:
-        value = a ** (r[second] as number);
+        for (; i < end; i++) r[out[i]!] = r[a[i]!]! ** r[b[i]!]!;
         break;
-      case 16: {
-        const b = r[second] as number;
-        value = a < b ? 1 : a >= b ? 0 : Number.NaN;
+      case 16:
+        for (; i < end; i++) r[out[i]!] = below(r[a[i]!]!, r[b[i]!]!);
         break;
-      }
-      case 17: {
-        const b = r[second] as number;
-        value = a <= b ? 1 : a > b ? 0 : Number.NaN;
+      case 17:
+        for (; i < end; i++) r[out[i]!] = atMost(r[a[i]!]!, r[b[i]!]!);
         break;
-      }
       case 18:
-        value =
-          a === 1 ? (r[second] as number) : a === 0 ? (r[code[at + 3] as number] as number) : Number.NaN;
+        for (; i < end; i++) r[out[i]!] = choose(r[a[i]!]!, r[b[i]!]!, r[c[i]!]!);
         break;
       case 19:
-        value = r[second] === 1 ? a : Number.NaN;
+        for (; i < end; i++) r[out[i]!] = r[b[i]!] === 1 ? r[a[i]!]! : Number.NaN;
         break;
       case 21:
-        value = a === 0 ? 0 : a * (r[second] as number);
+        for (; i < end; i++) r[out[i]!] = r[a[i]!] === 0 ? 0 : r[a[i]!]! * r[b[i]!]!;
         break;
       default:
-        throw new Error(`no way to run operation ${code[at]}`);
+        throw new Error(`no way to run operation ${series[s]}`);
     }
-    r[result] = value;
   }
+}
+
+function below(a: number, b: number): number {
+  return a < b ? 1 : a >= b ? 0 : Number.NaN;
+}
+
+function atMost(a: number, b: number): number {
+  return a <= b ? 1 : a > b ? 0 : Number.NaN;
+}
+
+function choose(condition: number, yes: number, no: number): number {
+  return condition === 1 ? yes : condition === 0 ? no : Number.NaN;
 }
 
 /** The outputs of a tape after a run. */
