@@ -1,5 +1,6 @@
 import { type Kernels, plainKernels } from './kernels.ts';
 import { operation } from './operation.ts';
+import { depthFirst } from './order.ts';
 import { STRIDE, type Tape } from './tape.ts';
 
 /** A value of a block's input: one for all variants, or one for each. */
@@ -84,41 +85,39 @@ interface RowPlan {
 }
 
 /** Gives each register a row, and each row to another register once its value has been read for the last time. */
-function planRows(tape: Tape): RowPlan {
-  const base = tape.inputs.length + tape.constants.length;
-  const instructions = tape.code.length / STRIDE;
-  const lastRead = new Int32Array(base + instructions).fill(-1);
-  for (let i = 0; i < instructions; i++) {
+function planRows({ inputs, constants, code, outputs }: Tape): RowPlan {
+  const base = inputs.length + constants.length;
+  const order = depthFirst(code, base, outputs);
+  const registers = base + code.length / STRIDE;
+  const lastRead = new Int32Array(registers).fill(-1);
+  for (const [step, i] of order.entries()) {
     for (let k = 1; k < STRIDE; k++) {
-      const register = tape.code[i * STRIDE + k] as number;
-      if (register >= 0) lastRead[register] = i;
+      const register = code[i * STRIDE + k] as number;
+      if (register >= 0) lastRead[register] = step;
     }
   }
   // Inputs and constants keep their rows from run to run; outputs must last to the end of one.
-  for (let register = 0; register < base; register++) lastRead[register] = instructions;
-  for (const register of tape.outputs) lastRead[register] = instructions;
+  for (let register = 0; register < base; register++) lastRead[register] = order.length;
+  for (const register of outputs) lastRead[register] = order.length;
 
-  const rowOf = new Int32Array(base + instructions);
-  for (let register = 0; register < base; register++) rowOf[register] = register;
+  const rowOf = Int32Array.from({ length: registers }, (_, register) => register);
   const free: number[] = [];
   let rows = base;
   const program: number[] = [];
-  for (let i = 0; i < instructions; i++) {
-    const operands: number[] = [];
-    for (let k = 1; k < STRIDE; k++) operands.push(tape.code[i * STRIDE + k] as number);
-    const operandRows = operands.map((register) => (register < 0 ? 0 : (rowOf[register] as number)));
+  for (const [step, i] of order.entries()) {
+    const operands = code.subarray(i * STRIDE + 1, (i + 1) * STRIDE);
+    const operandRows = Array.from(operands, (register) => (register < 0 ? 0 : (rowOf[register] as number)));
     // An operand's row may take the result: kernels read a place before they write it.
     for (const register of new Set(operands)) {
-      if (register >= base && lastRead[register] === i) free.push(rowOf[register] as number);
+      if (register >= base && lastRead[register] === step) free.push(rowOf[register] as number);
     }
     const row = free.pop() ?? rows++;
     rowOf[base + i] = row;
-    program.push(tape.code[i * STRIDE] as number, row, ...operandRows);
-    if (lastRead[base + i] === -1) free.push(row);
+    program.push(code[i * STRIDE] as number, row, ...operandRows);
   }
   return {
     rows,
     program: Int32Array.from(program),
-    outputRows: Int32Array.from(tape.outputs, (register) => rowOf[register] as number),
+    outputRows: Int32Array.from(outputs, (register) => rowOf[register] as number),
   };
 }

@@ -1,15 +1,16 @@
 import type { Measure } from '../quantity/index.ts';
 import { Op, type OpCode } from './operation.ts';
+import { inSeries, STRIDE } from './order.ts';
 import type { Query } from './query.ts';
 import type { Scalar } from './scalar.ts';
-import { NO_OPERAND, type TapeInput, type Trace } from './trace.ts';
+import { NO_OPERAND, type TapeInput, type Trace, type TracedGuard } from './trace.ts';
 
-/** How many numbers an instruction has in `code`: the operation and three operands. */
-export const STRIDE = 4;
+export { STRIDE };
 
 /**
  * A flat program. Its registers are, in this order: the inputs, the constants, and one for the result of each
- * instruction. Plain data: it can be sent to a worker as it is.
+ * instruction. Instructions of one operation stand in series (see `inSeries`). Plain data: it can be sent to a
+ * worker as it is.
  */
 export interface Tape {
   readonly inputs: readonly TapeInput[];
@@ -57,7 +58,7 @@ export function finish(trace: Trace, outputs: readonly Scalar[]): Tape {
 
   const base = trace.inputs.length + constants.length;
   const code: number[] = [];
-  const guards: TapeGuard[] = [];
+  const guarded: number[] = [];
   const at = (index: number | undefined): number =>
     index === undefined || index < 0 ? NO_OPERAND : (register[index] ?? NO_OPERAND);
   for (let i = 0; i < trace.length; i++) {
@@ -70,22 +71,36 @@ export function finish(trace: Trace, outputs: readonly Scalar[]): Tape {
     register[i] = base + code.length / STRIDE;
     const third = op === Op.guard ? NO_OPERAND : at(trace.third[i]);
     code.push(op, at(trace.first[i]), at(trace.second[i]), third);
-    const guard = op === Op.guard ? trace.guards[trace.third[i] ?? -1] : undefined;
-    if (guard === undefined) continue;
-    guards.push({
-      condition: at(trace.second[i]),
-      owner: guard.owner,
-      code: guard.query.code,
-      parts: guard.query.parts,
-      figures: guard.query.figures.map(({ scalar, measure }) => ({ register: at(scalar.index), measure })),
-    });
+    if (op === Op.guard) guarded.push(i);
+  }
+
+  const order = inSeries(code, base);
+  const place = new Int32Array(order.length);
+  for (const [to, from] of order.entries()) place[from] = to;
+  const renumber = (old: number): number => (old < base ? old : base + (place[old - base] as number));
+  const ordered = new Int32Array(code.length);
+  for (const [to, from] of order.entries()) {
+    ordered[to * STRIDE] = code[from * STRIDE] as number;
+    for (let k = 1; k < STRIDE; k++) ordered[to * STRIDE + k] = renumber(code[from * STRIDE + k] as number);
   }
   return {
     inputs: [...trace.inputs],
     constants: Float64Array.from(constants),
-    code: Int32Array.from(code),
-    outputs: Int32Array.from(outputs, (output) => at(output.index)),
-    guards,
+    code: ordered,
+    outputs: Int32Array.from(outputs, (output) => renumber(at(output.index))),
+    guards: guarded.map((i) => {
+      const { owner, query } = trace.guards[trace.third[i] as number] as TracedGuard;
+      return {
+        condition: renumber(at(trace.second[i])),
+        owner,
+        code: query.code,
+        parts: query.parts,
+        figures: query.figures.map(({ scalar, measure }) => ({
+          register: renumber(at(scalar.index)),
+          measure,
+        })),
+      };
+    }),
   };
 }
 
