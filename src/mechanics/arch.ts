@@ -8,7 +8,8 @@ import {
   subtract,
 } from '../geometry/index.ts';
 import { LENGTH } from '../quantity/index.ts';
-import { Refusal, type Scalar } from '../tape/index.ts';
+import { guard, Refusal, type Scalar, say } from '../tape/index.ts';
+import { HINGES_IN_LINE } from './tolerance.ts';
 
 /** What a point on an axis is: where the arch is pinned, bends, hinges, or only passes through on an arc. */
 export type Role = 'springing' | 'knee' | 'through' | 'crown';
@@ -91,6 +92,20 @@ export function span(arch: Arch): Scalar {
 export function hingeRise(arch: Arch): Scalar {
   const base = subtract(arch.right, arch.left);
   return cross(base, subtract(arch.crown, arch.left)).over(distance(arch.left, arch.right));
+}
+
+/**
+ * Passes a value on where the arch has stiffness: a query where its three hinges lie on one line.
+ */
+export function whereStiff(arch: Arch, value: Scalar): Scalar {
+  const off = hingeRise(arch).absolute();
+  return guard(
+    value,
+    off.above(distance(arch.left, arch.right).times(HINGES_IN_LINE)),
+    say(
+      'hinges-in-line',
+    )`The three hinges lie on one line (the crown is ${off} off it): the arch has no stiffness against loads across it. Raise or lower the crown`,
+  );
 }
 
 function checkOrder(roles: readonly Role[]): void {

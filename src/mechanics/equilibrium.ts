@@ -1,10 +1,9 @@
-import { add, cross, distance, dot, reverse, scale, subtract, type Vector } from '../geometry/index.ts';
+import { add, cross, dot, reverse, scale, subtract, type Vector } from '../geometry/index.ts';
 import { NONE } from '../quantity/index.ts';
-import { Condition, guard, type Scalar, say } from '../tape/index.ts';
-import { type Arch, hingeRise } from './arch.ts';
+import { Condition, type Scalar } from '../tape/index.ts';
+import { type Arch, whereStiff } from './arch.ts';
 import { type PlacedLoad, type Resultant, resultant } from './load.ts';
 import { isBefore, isLeft, type Place } from './place.ts';
-import { HINGES_IN_LINE } from './tolerance.ts';
 
 /** What the ground and the halves press on each other with. */
 export interface Reactions {
@@ -30,14 +29,7 @@ export interface Reactions {
 export function reactions(arch: Arch, loads: readonly PlacedLoad[]): Reactions {
   const { left: a, crown: c, right: b } = arch;
   const [u, v] = [subtract(a, c), subtract(a, b)];
-  const off = hingeRise(arch).absolute();
-  const twiceArea = guard(
-    cross(u, v),
-    off.above(distance(a, b).times(HINGES_IN_LINE)),
-    say(
-      'hinges-in-line',
-    )`The three hinges lie on one line (the crown is ${off} off it): the arch has no stiffness against loads across it. Raise or lower the crown`,
-  );
+  const twiceArea = whereStiff(arch, cross(u, v));
   const ofLeft = resultant(loads, c, (load) => isLeft(arch, load.place));
   const ofAll = resultant(loads, b, () => always(twiceArea));
   const push = subtract(scale(u, ofAll.moment), scale(v, ofLeft.moment));

@@ -13,7 +13,7 @@ import {
   turnOf,
 } from '../geometry/index.ts';
 import { guard, type Scalar, say } from '../tape/index.ts';
-import { type Arch, axisLength, crownStart } from './arch.ts';
+import { type Arch, axisLength, crownStart, whereStiff } from './arch.ts';
 import type { PlacedLoad } from './load.ts';
 import { isBefore, isLeft, type Place } from './place.ts';
 import { AT_HINGE, DEAD_POINT } from './tolerance.ts';
@@ -44,11 +44,11 @@ export interface Mechanism {
  * It is driven from the left springing unless that is near a dead point (the far circles nearly touch), and
  * then from the right one; only where all hinges lie on one line are both ends at a dead point.
  *
- * A query where the cut is at a hinge.
+ * A query where the cut is at a hinge, or the arch without stiffness.
  */
 export function releaseMoment(arch: Arch, cut: Place, perturbation: Scalar): Mechanism {
   const inLeft = isLeft(arch, cut);
-  const cutPoint = checkCut(arch, cut);
+  const cutPoint = checkCut(arch, { ...cut, along: whereStiff(arch, cut.along) });
   const first = chooseVector(inLeft, cutPoint, arch.crown);
   const second = chooseVector(inLeft, arch.crown, cutPoint);
 
