@@ -1,9 +1,9 @@
 import { defineNode, input, kinds, many, output, outputs } from '../../src/graph/index.ts';
-import { archMoment as find, placeLoads } from '../../src/mechanics/index.ts';
+import { archMoment as find, placeLoads, shapePlaces } from '../../src/mechanics/index.ts';
 import { load } from '../loads/kinds.ts';
 import { point } from '../setting-out/kinds.ts';
 import { exampleArch, exampleKneeMoment, exampleLoads } from './example-arch.ts';
-import { station } from './kinds.ts';
+import { mechanism, station } from './kinds.ts';
 
 export const archMoment = defineNode({
   name: 'arch-moment',
@@ -22,8 +22,8 @@ export const archMoment = defineNode({
     difference: output(kinds.moment, 'Difference of the two routes'),
     along: outputs(kinds.length, 'Displacement along each load'),
     change: output(kinds.angle, 'Change of angle'),
-    hinges: outputs(point, 'Inner hinges, moved'),
     moved: outputs(point, 'Moved points'),
+    mechanism: output(mechanism, 'Perturbed mechanism'),
   },
   trace({ station: { arch, place }, loads, perturbation }) {
     const placed = placeLoads(arch, loads);
@@ -35,8 +35,15 @@ export const archMoment = defineNode({
       difference: found.difference,
       along: found.virtualWork.along,
       change: found.mechanism.closing,
-      hinges: found.mechanism.movedHinges,
       moved: placed.map((one) => found.mechanism.move(one)),
+      mechanism: {
+        points: [...shapePlaces(arch), place].map((at) => ({
+          along: at.along,
+          at: found.mechanism.move({ at: at.point, place: at }),
+        })),
+        hinges: found.mechanism.movedHinges,
+        circles: found.mechanism.circles,
+      },
     };
   },
   example: {

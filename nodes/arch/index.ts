@@ -4,8 +4,10 @@ import { axis } from './axis.ts';
 import { crown } from './crown.ts';
 import { difference } from './difference.ts';
 import { forcesAtStation } from './forces-at-station.ts';
+import { hall } from './hall.ts';
 import * as kinds from './kinds.ts';
 import { knee } from './knee.ts';
+import { momentLine } from './moment-line.ts';
 import { reactions } from './reactions.ts';
 import { springing } from './springing.ts';
 import { station } from './station.ts';
@@ -17,7 +19,15 @@ import { throughPoint } from './through-point.ts';
 export const arch = definePack({
   name: 'arch',
   version: '1.0.0',
-  kinds: [kinds.keyPoint, kinds.arch, kinds.station],
+  kinds: [
+    kinds.keyPoint,
+    kinds.arch,
+    kinds.station,
+    kinds.mechanism,
+    kinds.reaction,
+    kinds.momentLine,
+    kinds.hall,
+  ],
   nodes: [
     springing,
     knee,
@@ -31,5 +41,7 @@ export const arch = definePack({
     archMoment,
     forcesAtStation,
     difference,
+    momentLine,
+    hall,
   ],
 });

@@ -1,8 +1,8 @@
-import { defineNode, input, kinds, many, output } from '../../src/graph/index.ts';
+import { defineNode, input, kinds, many, output, outputs } from '../../src/graph/index.ts';
 import { reactions as find, placeLoads } from '../../src/mechanics/index.ts';
 import { load } from '../loads/kinds.ts';
 import { exampleArch, exampleLoads, exampleThrust } from './example-arch.ts';
-import { arch } from './kinds.ts';
+import { arch, reaction } from './kinds.ts';
 
 export const reactions = defineNode({
   name: 'reactions',
@@ -18,6 +18,7 @@ export const reactions = defineNode({
     crownAcross: output(kinds.force, 'Crown, across'),
     crownUp: output(kinds.force, 'Crown, up'),
     residual: output(kinds.moment, 'Residual moment at the crown'),
+    reactions: outputs(reaction, 'Reactions of the ground'),
   },
   trace({ arch: of, loads }) {
     const { left, right, crown, residual } = find(of, placeLoads(of, loads));
@@ -29,6 +30,10 @@ export const reactions = defineNode({
       crownAcross: crown.x,
       crownUp: crown.y,
       residual,
+      reactions: [
+        { at: of.left, force: left },
+        { at: of.right, force: right },
+      ],
     };
   },
   example: {

@@ -11,4 +11,7 @@ export const load: Kind<PointLoad> = defineKind<PointLoad>({
     const [at = '', force = ''] = typeof literal === 'string' ? [] : literal;
     return { at: readPoint(at, quantity), force: readPoint(force, quantity) };
   },
+  draw: ({ at, force, tiedTo }) => [
+    { mark: 'load', at, force, ...(tiedTo === undefined ? {} : { tie: tiedTo }) },
+  ],
 });

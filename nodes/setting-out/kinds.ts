@@ -1,5 +1,5 @@
 import { type Arc, arcThrough, type Chord, type Circle, type Point } from '../../src/geometry/index.ts';
-import { defineKind, type Kind, type Literal } from '../../src/graph/index.ts';
+import { defineKind, type Figures, type Kind, type Literal, type XY } from '../../src/graph/index.ts';
 import type { Scalar } from '../../src/tape/index.ts';
 
 type Reader = (text: Literal) => Scalar;
@@ -20,6 +20,7 @@ export const point: Kind<Point> = defineKind<Point>({
   called: 'a point',
   line: 'geometry',
   literal: readPoint,
+  draw: (at) => [{ mark: 'point', at }],
 });
 
 export const chord: Kind<Chord> = defineKind<Chord>({
@@ -30,6 +31,7 @@ export const chord: Kind<Chord> = defineKind<Chord>({
     const [from = '', to = ''] = parts(literal);
     return { from: readPoint(from, quantity), to: readPoint(to, quantity) };
   },
+  draw: ({ from, to }) => [{ mark: 'line', from, to }],
 });
 
 export const circle: Kind<Circle> = defineKind<Circle>({
@@ -40,6 +42,7 @@ export const circle: Kind<Circle> = defineKind<Circle>({
     const [centre = '', radius = ''] = parts(literal);
     return { centre: readPoint(centre, quantity), radius: quantity(radius) };
   },
+  draw: ({ centre, radius }) => [{ mark: 'circle', centre, radius }],
 });
 
 export const arc: Kind<Arc> = defineKind<Arc>({
@@ -50,4 +53,16 @@ export const arc: Kind<Arc> = defineKind<Arc>({
     const [from = '', through = '', to = ''] = parts(literal);
     return arcThrough(readPoint(from, quantity), readPoint(through, quantity), readPoint(to, quantity));
   },
+  draw: (figures) => [{ mark: 'curve', points: pointsOfArc(figures) }],
 });
+
+/** Points along an arc, close enough to draw it by straight lines. */
+export function pointsOfArc({ centre, from, sweep }: Figures<Arc>): XY[] {
+  const steps = Math.max(2, Math.ceil(Math.abs(sweep) / 0.05));
+  const [dx, dy] = [from.x - centre.x, from.y - centre.y];
+  return Array.from({ length: steps + 1 }, (_, i) => {
+    const angle = (sweep * i) / steps;
+    const [c, s] = [Math.cos(angle), Math.sin(angle)];
+    return { x: centre.x + dx * c - dy * s, y: centre.y + dx * s + dy * c };
+  });
+}

@@ -1,5 +1,6 @@
 import { type Measure, NONE, nameDimension } from '../quantity/index.ts';
 import { Refusal, type Scalar, Trace } from '../tape/index.ts';
+import type { Figures, Mark } from './scene.ts';
 
 /** What a link of a kind is drawn as: each is a line type of the drawing. */
 export type LineType = 'numbers' | 'geometry' | 'structure' | 'virtual' | 'results';
@@ -19,6 +20,8 @@ export interface Kind<T> {
   readonly typed?: 'measure' | 'any' | 'counts';
   /** Other kinds that a value of this one can stand for. */
   readonly alsoAs?: readonly Conversion<T>[];
+  /** What a value draws, from its figures. */
+  readonly draw?: (figures: Figures<T>) => readonly Mark[];
   /** Makes a value from an example's literal; `quantity` reads one figure. */
   readonly literal?: (literal: Literal, quantity: (text: Literal) => Scalar, trace: Trace) => T;
 }

@@ -22,6 +22,7 @@ export {
   placeNearest,
   placeOnSegment,
 } from './place.ts';
+export { forcesAlong, shapePlaces, stationsAlong, towardsIntrados } from './stations.ts';
 export { AT_HINGE, DEAD_POINT, HINGES_IN_LINE, OFF_AXIS, UNMOVED } from './tolerance.ts';
 export {
   negligibleDisplacement,

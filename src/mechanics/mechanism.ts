@@ -1,4 +1,5 @@
 import {
+  type Circle,
   chooseMotion,
   chooseVector,
   circlesMeet,
@@ -14,7 +15,6 @@ import {
 } from '../geometry/index.ts';
 import { guard, type Scalar, say } from '../tape/index.ts';
 import { type Arch, axisLength, crownStart, whereStiff } from './arch.ts';
-import type { PlacedLoad } from './load.ts';
 import { isBefore, isLeft, type Place } from './place.ts';
 import { AT_HINGE, DEAD_POINT } from './tolerance.ts';
 
@@ -28,10 +28,12 @@ export interface Mechanism {
   readonly movedHinges: readonly [Point, Point];
   /** The motions of the three bodies, from left to right. */
   readonly bodies: readonly [Motion, Motion, Motion];
+  /** The circles that found the far hinge: about the driven hinge, and about the far springing. */
+  readonly circles: readonly [Circle, Circle];
   /** The relative turn at the cut, positive where the angle on the intrados closes. */
   readonly closing: Scalar;
-  /** Where a load's point is moved to, with the body that carries the load. */
-  move(load: PlacedLoad): Point;
+  /** Where a point is moved to, with the body that carries it at a place of the axis. */
+  move(tied: { readonly at: Point; readonly place: Place }): Point;
 }
 
 /**
@@ -62,11 +64,11 @@ export function releaseMoment(arch: Arch, cut: Place, perturbation: Scalar): Mec
 
   const driver = turnAbout(driven, perturbation);
   const nearMoved = moved(driver, near);
-  const farMoved = circlesMeet(
+  const circles: readonly [Circle, Circle] = [
     { centre: nearMoved, radius: distance(near, far) },
     { centre: end, radius: distance(far, end) },
-    { nearest: far },
-  );
+  ];
+  const farMoved = circlesMeet(...circles, { nearest: far });
   const middle = motionBetween({ from: near, to: far }, { from: nearMoved, to: farMoved });
   const follower = motionBetween({ from: end, to: far }, { from: end, to: farMoved });
 
@@ -77,17 +79,15 @@ export function releaseMoment(arch: Arch, cut: Place, perturbation: Scalar): Mec
     hinges: [first, second],
     movedHinges: [chooseVector(fromLeft, nearMoved, farMoved), chooseVector(fromLeft, farMoved, nearMoved)],
     bodies: [leftBody, middle, rightBody],
+    circles,
     closing: inLeft.choose(turnLeft.minus(turnMiddle), turnMiddle.minus(turnRight)),
-    move: (load) => {
-      const beforeCut = isBefore(load.place, cut);
-      const left = isLeft(arch, load.place);
+    move: ({ at, place }) => {
+      const beforeCut = isBefore(place, cut);
+      const left = isLeft(arch, place);
       const beforeFirst = left.and(beforeCut);
       const afterSecond = left.or(beforeCut).not();
       // Left of the first inner hinge, right of the second, or between the two.
-      return moved(
-        chooseMotion(beforeFirst, leftBody, chooseMotion(afterSecond, rightBody, middle)),
-        load.at,
-      );
+      return moved(chooseMotion(beforeFirst, leftBody, chooseMotion(afterSecond, rightBody, middle)), at);
     },
   };
 }
