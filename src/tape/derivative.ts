@@ -16,8 +16,7 @@ export function derivative(
   input: Scalar,
   at: Scalar | number = input,
 ): readonly Scalar[] {
-  const place = typeof at === 'number' ? input.trace.constant(at, input.dimension) : at;
-  const replay = new Replay(outputs, input, place);
+  const replay = new Replay(outputs, input, at);
   return outputs.map((output) => replay.slope(output));
 }
 
@@ -27,8 +26,7 @@ export function substitute(
   input: Scalar,
   at: Scalar | number,
 ): readonly Scalar[] {
-  const place = typeof at === 'number' ? input.trace.constant(at, input.dimension) : at;
-  const replay = new Replay(outputs, input, place);
+  const replay = new Replay(outputs, input, at);
   return outputs.map((output) => replay.value(output));
 }
 
@@ -43,9 +41,11 @@ class Replay {
   /** Only slopes that are not zero throughout. */
   private readonly slopes = new Map<number, Scalar>();
 
-  constructor(outputs: readonly Scalar[], input: Scalar, place: Scalar) {
+  constructor(outputs: readonly Scalar[], input: Scalar, at: Scalar | number) {
     this.trace = input.trace;
     this.input = input;
+    const place = typeof at === 'number' ? this.trace.constant(at, input.dimension) : at;
+    this.trace.mustOwn([place, ...outputs]);
     this.values.set(input.index, place);
     this.slopes.set(input.index, this.trace.constant(1, NONE));
     for (const index of between(this.trace, input, outputs)) this.step(index);
@@ -83,8 +83,9 @@ class Replay {
       return;
     }
     if (code === Op.mark) {
-      // Followed through only if it is not the variable itself: another mark keeps its value and passes slopes.
-      this.set(index, trace.mark(a), slopeA);
+      // Followed through only if it is not the variable itself: another mark passes slopes. At the present place it
+      // stays the variable that it is, so that the slope can still be differentiated by it.
+      this.set(index, a.index === first ? new Scalar(trace, index) : trace.mark(a), slopeA);
       return;
     }
     if (code === Op.choose) {
