@@ -22,7 +22,7 @@ export type Edit =
   | { readonly edit: 'remove-link'; readonly link: Link }
   | { readonly edit: 'set-rail'; readonly rail: readonly string[] }
   /** A member of the document other than its nodes, links and rail. */
-  | { readonly edit: 'set-member'; readonly member: string; readonly value: unknown }
+  | { readonly edit: 'set-member'; readonly member: string; readonly value: unknown; readonly at?: number }
   | { readonly edit: 'several'; readonly edits: readonly Edit[] };
 
 /** Thrown where an edit does not fit the document. */
@@ -54,7 +54,7 @@ export function apply(document: GraphDocument, edit: Edit): Applied {
       const before = own(node.values, edit.input);
       return {
         document: replaced(document, withMember(node, 'values', edit.input, edit.text)),
-        inverse: { ...edit, text: before },
+        inverse: takesOut(edit.text, before) ? { edit: 'change-node', node } : { ...edit, text: before },
       };
     }
     case 'set-setting': {
@@ -62,7 +62,7 @@ export function apply(document: GraphDocument, edit: Edit): Applied {
       const before = own(node.settings, edit.setting);
       return {
         document: replaced(document, withMember(node, 'settings', edit.setting, edit.value)),
-        inverse: { ...edit, value: before },
+        inverse: takesOut(edit.value, before) ? { edit: 'change-node', node } : { ...edit, value: before },
       };
     }
     case 'add-link': {
@@ -88,10 +88,7 @@ export function apply(document: GraphDocument, edit: Edit): Applied {
       if (['format', 'version', 'nodes', 'links', 'rail'].includes(edit.member)) {
         throw new EditError(`the member "${edit.member}" is not set as a whole`);
       }
-      const before = own(document, edit.member);
-      const changed: Record<string, unknown> = { ...document, [edit.member]: edit.value };
-      if (edit.value === undefined) delete changed[edit.member];
-      return { document: changed as unknown as GraphDocument, inverse: { ...edit, value: before } };
+      return setMember(document, edit.member, edit.value, edit.at);
     }
     case 'several': {
       const inverses: Edit[] = [];
@@ -124,6 +121,11 @@ export function changesOnlyValues(edit: Edit): boolean {
   return edit.edit === 'set-value';
 }
 
+/** Whether a member goes out: put back by itself it would stand behind the others, so the whole record comes back. */
+function takesOut(value: unknown, before: unknown): boolean {
+  return value === undefined && before !== undefined;
+}
+
 function addNode(document: GraphDocument, node: NodeRecord, at: number): Applied {
   if (nodesById(document).has(node.id)) throw new EditError(`there is a node "${node.id}" already`);
   return {
@@ -148,6 +150,19 @@ function removeNode(document: GraphDocument, id: string): Applied {
 function changeNode(document: GraphDocument, node: NodeRecord): Applied {
   const before = find(document, node.id);
   return { document: replaced(document, node), inverse: { edit: 'change-node', node: before } };
+}
+
+function setMember(document: GraphDocument, member: string, value: unknown, at?: number): Applied {
+  const members = Object.entries(document);
+  const known = members.findIndex(([name]) => name === member);
+  const before = members[known]?.[1];
+  if (known !== -1) members.splice(known, 1);
+  const place = known === -1 ? (at ?? members.length) : known;
+  if (value !== undefined) members.splice(place, 0, [member, value]);
+  return {
+    document: Object.fromEntries(members) as unknown as GraphDocument,
+    inverse: { edit: 'set-member', member, value: before, at: place },
+  };
 }
 
 function find(document: GraphDocument, id: string): NodeRecord {

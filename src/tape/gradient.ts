@@ -12,6 +12,7 @@ import { Condition, Scalar } from './scalar.ts';
  */
 export function gradient(output: Scalar, inputs: readonly Scalar[]): readonly Scalar[] {
   const { trace } = output;
+  trace.mustOwn(inputs);
   const stop = inputs.reduce((least, input) => Math.min(least, input.index), output.index);
   const wanted = reached(output, inputs);
   const weights = new Map<number, Weight>();
@@ -46,22 +47,23 @@ export function gradient(output: Scalar, inputs: readonly Scalar[]): readonly Sc
         if (query === undefined) throw new Error(`no guard at operation ${i}`);
         const condition = new Condition(new Scalar(trace, second));
         const guarded = trace.guard(Op.guard, scalar, condition, query, owner);
-        const zero = trace.constant(0, scalar.dimension);
-        const isZero = scalar.atMost(zero).and(scalar.atLeast(zero));
-        give(first, chosen ? isZero.choose(zero, guarded) : guarded, chosen);
+        give(first, chosen ? unlessZero(scalar, guarded) : guarded, chosen);
         break;
       }
       case Op.choose: {
         const condition = new Condition(new Scalar(trace, first));
         const zero = trace.constant(0, scalar.dimension);
-        give(second, condition.choose(scalar, zero), true);
-        give(third, condition.choose(zero, scalar), true);
+        // A choice that was itself not chosen may have a condition that waits.
+        const sure = (weight: Scalar) => (chosen ? unlessZero(scalar, weight) : weight);
+        give(second, sure(condition.choose(scalar, zero)), true);
+        give(third, sure(condition.choose(zero, scalar)), true);
         break;
       }
       case Op.damp: {
         const [a, b] = [new Scalar(trace, first), new Scalar(trace, second)];
         give(first, trace.apply(Op.damp, scalar, b), chosen);
-        give(second, trace.apply(Op.damp, a, scalar), chosen);
+        // The factor that damps is 0 for what was not chosen.
+        give(second, trace.apply(Op.damp, a, scalar), true);
         break;
       }
       default: {
@@ -91,6 +93,12 @@ interface Weight {
   readonly scalar: Scalar;
   /** True where the weight has come through a choice, and so may be 0 for what was not chosen. */
   readonly chosen: boolean;
+}
+
+/** `otherwise`, or 0 where the weight is 0: what was not chosen passes nothing back, even where it waits. */
+function unlessZero(weight: Scalar, otherwise: Scalar): Scalar {
+  const zero = weight.trace.constant(0, weight.dimension);
+  return weight.absolute().atMost(zero).choose(zero, otherwise);
 }
 
 /** Marks what depends on any of the inputs. */

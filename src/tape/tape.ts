@@ -22,8 +22,9 @@ export interface Tape {
   readonly guards: readonly TapeGuard[];
 }
 
-/** A guard on a tape: where its condition stands, who it belongs to, what it says. */
+/** A guard on a tape: where its result and its condition stand, who it belongs to, what it says. */
 export interface TapeGuard {
+  readonly result: number;
   readonly condition: number;
   readonly owner: string | undefined;
   readonly code: string;
@@ -46,6 +47,7 @@ export function operationCount(tape: Tape): number {
  * something to derivatives only, go too. Every input of the trace keeps its place, read or not.
  */
 export function finish(trace: Trace, outputs: readonly Scalar[]): Tape {
+  trace.mustOwn(outputs);
   const live = liveness(trace, outputs);
   const register = new Int32Array(trace.length).fill(NO_OPERAND);
   const constants: number[] = [];
@@ -91,6 +93,7 @@ export function finish(trace: Trace, outputs: readonly Scalar[]): Tape {
     guards: guarded.map((i) => {
       const { owner, query } = trace.guards[trace.third[i] as number] as TracedGuard;
       return {
+        result: renumber(at(i)),
         condition: renumber(at(trace.second[i])),
         owner,
         code: query.code,
@@ -122,14 +125,17 @@ function liveness(trace: Trace, outputs: readonly Scalar[]): Uint8Array {
 
 /**
  * The queries of the guards that fail, after a run: each text of an owner once. A guard whose condition itself
- * waits is silent, since the query that it waits for stands elsewhere.
+ * waits is silent, since the query that it waits for stands elsewhere; and so is one that no output waits for,
+ * as in a branch that was not chosen.
  *
  * @param registers as the run left them.
  */
 export function failedGuards(tape: Tape, registers: Float64Array): Query[] {
   const failed = new Map<string, Query>();
+  if (tape.guards.every((guard) => registers[guard.condition] !== 0)) return [];
+  const waitedFor = waiting(tape, registers);
   for (const guard of tape.guards) {
-    if (registers[guard.condition] !== 0) continue;
+    if (registers[guard.condition] !== 0 || waitedFor[guard.result] !== 1) continue;
     // The same guard of one owner may be written again where a derivative is taken: the first one speaks.
     const key = `${guard.owner}\n${guard.code}\n${guard.parts.join('\n')}`;
     if (failed.has(key)) continue;
@@ -144,4 +150,27 @@ export function failedGuards(tape: Tape, registers: Float64Array): Query[] {
     });
   }
   return [...failed.values()];
+}
+
+/** Marks the registers that outputs wait for: those that wait and that nothing keeps from an output. */
+function waiting({ code, outputs }: Tape, registers: Float64Array): Uint8Array {
+  const base = registers.length - code.length / STRIDE;
+  const met = new Uint8Array(registers.length);
+  const stack: number[] = [];
+  const visit = (register: number): void => {
+    if (register < 0 || met[register] === 1 || !Number.isNaN(registers[register])) return;
+    met[register] = 1;
+    stack.push(register);
+  };
+  outputs.forEach(visit);
+  for (let register = stack.pop(); register !== undefined; register = stack.pop()) {
+    if (register < base) continue;
+    const at = (register - base) * STRIDE;
+    const [op, first = NO_OPERAND, second = NO_OPERAND, third = NO_OPERAND] = code.subarray(at, at + STRIDE);
+    visit(first);
+    // Of the two branches of a choice only the chosen one is waited for.
+    if (op !== Op.choose || registers[first] === 1) visit(second);
+    if (op !== Op.choose || registers[first] === 0) visit(third);
+  }
+  return met;
 }

@@ -20,6 +20,8 @@ export interface TapeInput {
 /** Marks the place of an operand that an operation does not have. */
 export const NO_OPERAND = -1;
 
+const MIXED = 'scalars of two traces do not mix';
+
 /**
  * Operations while they are being recorded. A trace only grows; `finish` makes the flat tape from what given
  * outputs need. Constants are folded and equal operations shared as they are written.
@@ -54,9 +56,11 @@ export class Trace {
     return this.write(Op.input, this.inputs.length - 1, NO_OPERAND, NO_OPERAND, dim);
   }
 
-  /** A number that is known while tracing. It must be finite. */
-  constant(value: number, dim: Dimension): Scalar {
-    if (!Number.isFinite(value)) throw new RangeError(`a constant must be finite, not ${value}`);
+  /** A number that is known while tracing. It must be finite; −0 is taken as 0. */
+  constant(number: number, dim: Dimension): Scalar {
+    if (!Number.isFinite(number)) throw new RangeError(`a constant must be finite, not ${number}`);
+    // Both zeros are one constant, and which was written first must not turn an angle of π into −π.
+    const value = number === 0 ? 0 : number;
     let ofDimension = this.constantIndex.get(dim);
     if (ofDimension === undefined) {
       ofDimension = new Map();
@@ -72,13 +76,15 @@ export class Trace {
 
   /** The same value as a variable of its own, for derivatives by it alone. */
   mark(value: Scalar): Scalar {
+    this.mustOwn([value]);
     return this.write(Op.mark, value.index, NO_OPERAND, NO_OPERAND, value.dimension);
   }
 
   /** The result of an operation: folded, simplified or shared where that can be, else written. */
   apply(code: OpCode, a: Scalar, b?: Scalar, c?: Scalar): Scalar {
+    // Written out, not `mustOwn`: this is where tracing spends its time.
     if (a.trace !== this || (b !== undefined && b.trace !== this) || (c !== undefined && c.trace !== this)) {
-      throw new Error('scalars of two traces do not mix');
+      throw new Error(MIXED);
     }
     const exponent =
       code === Op.power && b !== undefined ? (this.constantAt(b.index) ?? Number.NaN) : Number.NaN;
@@ -101,8 +107,9 @@ export class Trace {
     query: QueryDraft,
     owner = this.owner,
   ): Scalar {
+    this.mustOwn([value, condition.scalar, ...query.figures.map(({ scalar }) => scalar)]);
     if (this.constantAt(condition.scalar.index) === 1) return value;
-    const figures = query.figures.map((figure) => figure.scalar.index);
+    const figures = query.figures.map(({ scalar, measure }) => [scalar.index, measure.name]);
     const key = JSON.stringify([owner, query.code, query.parts, figures]);
     let number = this.guardNumbers.get(key);
     if (number === undefined) {
@@ -110,6 +117,11 @@ export class Trace {
       this.guardNumbers.set(key, number);
     }
     return this.share(code, value.index, condition.scalar.index, number, value.dimension);
+  }
+
+  /** Throws where a scalar belongs to another trace: its index would name something else here. */
+  mustOwn(scalars: readonly Scalar[]): void {
+    for (const scalar of scalars) if (scalar.trace !== this) throw new Error(MIXED);
   }
 
   dimensionAt(index: number): Dimension {

@@ -1,0 +1,226 @@
+import { describe, expect, it } from 'vitest';
+import type { NodeRecord } from '../../src/graph/index.ts';
+import { everyFigure, open, texts } from '../support/graphs.ts';
+
+const length = (id: string, value = '3 m'): NodeRecord => ({
+  id,
+  type: 'quantities/length',
+  values: { value },
+});
+const point = (id: string): NodeRecord => ({ id, type: 'setting-out/point' });
+const formula = (id: string, text: string): NodeRecord => ({
+  id,
+  type: 'quantities/formula',
+  settings: { formula: text },
+});
+
+describe('what is wrong with a graph', () => {
+  it.each<[string, NodeRecord[], string[], string[]]>([
+    [
+      'a link from a node that is not there',
+      [point('p')],
+      ['gone.value > p.up'],
+      [
+        'p: Input "Up" is linked to a node "gone" that the graph does not have: link another output, or remove the link',
+      ],
+    ],
+    [
+      'a link to a node that is not there',
+      [length('a')],
+      ['a.value > gone.up'],
+      ['graph: A link leads to a node "gone" that the graph does not have: remove the link'],
+    ],
+    [
+      'a link from an output that is not there',
+      [length('a'), point('p')],
+      ['a.height > p.up'],
+      [
+        'p: Input "Up" is linked to an output "height" that "Length" does not have: link another output, or remove the link',
+      ],
+    ],
+    [
+      'a link to an input that is not there',
+      [length('a'), point('p')],
+      ['a.value > p.sideways'],
+      ['p: A link ends at an input "sideways" that the node does not have: remove the link'],
+    ],
+    [
+      'a kind that does not fit',
+      [{ id: 'f', type: 'quantities/force' }, point('p')],
+      ['f.value > p.up'],
+      ['p: A force is linked to input "Up", which takes a length: link another output'],
+    ],
+    [
+      'a quantity of the wrong dimension',
+      [length('a'), formula('f', 'a * a'), point('p')],
+      ['a.value > f.a', 'f.result > p.up'],
+      ['p: An area is linked where a length is wanted'],
+    ],
+    [
+      'two links where one is taken',
+      [length('a'), length('b'), point('p')],
+      ['a.value > p.up', 'b.value > p.up'],
+      ['p: Input "Up" takes one link and has 2: remove all but one'],
+    ],
+    [
+      'an input without a link',
+      [{ id: 'c', type: 'setting-out/chord' }],
+      [],
+      [
+        'c: Input "From" has nothing linked to it: link a point',
+        'c: Input "To" has nothing linked to it: link a point',
+      ],
+    ],
+    [
+      'a node that no pack has',
+      [{ id: 's', type: 'towers/spire' }],
+      [],
+      [
+        's: No pack is loaded that has the node "towers/spire": load the pack "towers". The node\'s data is kept',
+      ],
+    ],
+    [
+      'a node that its pack does not have',
+      [{ id: 's', type: 'arch/spire' }],
+      [],
+      ['s: The pack "arch" has no node "arch/spire": replace the node. Its data is kept'],
+    ],
+    [
+      'a force where a length is typed',
+      [length('a', '12 kN')],
+      [],
+      ['a: Input "Length": "12 kN" is a force where a length is wanted'],
+    ],
+    [
+      'a figure without a unit',
+      [length('a', '12')],
+      [],
+      ['a: Input "Length": "12" has no unit where a length is wanted: write for example "12 m"'],
+    ],
+    [
+      'no figure at all',
+      [length('a', 'NaN m')],
+      [],
+      ['a: Input "Length": "NaN m" does not begin with a figure'],
+    ],
+    [
+      'a figure beyond all figures',
+      [length('a', '1e999 m')],
+      [],
+      ['a: Input "Length": "1e999 m" is too large a figure'],
+    ],
+    [
+      'a count that is none',
+      [{ id: 'n', type: 'quantities/count', values: { value: '2.5' } }],
+      [],
+      ['n: Input "Count": "2.5" is no count: write a whole number from 0 to 10000'],
+    ],
+    [
+      'a setting that is none of its options',
+      [{ id: 'r', type: 'quantities/reading', values: { value: '3 m' }, settings: { rule: 'sometimes' } }],
+      [],
+      ['r: Setting "Limit" is "sometimes", but must be one of none, at most, at least, target'],
+    ],
+    [
+      'a limit of another dimension',
+      [
+        {
+          id: 'r',
+          type: 'quantities/reading',
+          values: { value: '3 m', limit: '3 kN' },
+          settings: { rule: 'at most' },
+        },
+      ],
+      [],
+      ['r: The limit is a force where the value is a length: write the limit with its unit'],
+    ],
+    [
+      'a node that reads itself',
+      [formula('f', 'a + 1')],
+      ['f.result > f.a'],
+      ['f: The links run in a loop ("Formula" → "Formula"): remove one of them'],
+    ],
+    [
+      'lists where one is taken',
+      [
+        { id: 'a', type: 'setting-out/point' },
+        { id: 't', type: 'setting-out/turn' },
+        { id: 'o', type: 'setting-out/offset-point' },
+      ],
+      [
+        'a.point > t.point',
+        'a.point > t.centre',
+        'a.point > t.others',
+        'a.point > t.others',
+        't.others > o.from',
+      ],
+      ['o: A list of 2 is linked to input "From", which takes one point: link a single output'],
+    ],
+    [
+      'no reference where the nearest point is wanted',
+      [
+        { id: 'c', type: 'setting-out/point' },
+        { id: 'k', type: 'setting-out/circle' },
+        { id: 'm', type: 'setting-out/circles-meet' },
+      ],
+      ['c.point > k.centre', 'k.circle > m.first', 'k.circle > m.second'],
+      [
+        'm: The point nearest to a reference is wanted, and no reference is linked: link one, or set which point is meant',
+      ],
+    ],
+  ])('%s is a query that says so', (_, nodes, links, expected) => {
+    const session = open(nodes, links);
+    expect(texts(session)).toEqual(expected);
+    expect(session.document.nodes).toHaveLength(nodes.length);
+  });
+
+  it('on a loop of three names them, and what reads from it waits', () => {
+    const session = open(
+      [
+        formula('a', 'x + 1'),
+        formula('b', 'x + 1'),
+        formula('c', 'x + 1'),
+        formula('d', 'x * 2'),
+        length('e'),
+      ],
+      ['a.result > b.x', 'b.result > c.x', 'c.result > a.x', 'c.result > d.x'],
+    );
+    expect(texts(session)).toHaveLength(3);
+    for (const line of texts(session)) expect(line).toContain('The links run in a loop');
+    expect(['a', 'b', 'c', 'd', 'e'].map((id) => session.state(id))).toEqual([
+      'query',
+      'query',
+      'query',
+      'waits',
+      'ready',
+    ]);
+  });
+
+  it('shows once, where it is, and what depends on it waits without a figure', () => {
+    const session = open(
+      [
+        length('a'),
+        formula('f', '1 / (a - a)'),
+        formula('g', 'x + x'),
+        { id: 'r', type: 'quantities/reading' },
+      ],
+      ['a.value > f.a', 'f.result > g.x', 'g.result > r.value'],
+    );
+    expect(texts(session)).toEqual(['f: The formula divides by 0\u00a0m: change what it divides by']);
+    expect(['a', 'f', 'g', 'r'].map((id) => session.state(id))).toEqual(['ready', 'query', 'waits', 'waits']);
+    expect(session.value('g', 'result')).toBeUndefined();
+    expect(everyFigure(session).every(Number.isFinite)).toBe(true);
+  });
+
+  it('with a figure that grows beyond all bounds is a query, and no figure', () => {
+    const session = open(
+      [length('a', '1e300 m'), formula('f', 'a * a'), formula('g', 'x + x')],
+      ['a.value > f.a', 'f.result > g.x'],
+    );
+    expect(texts(session)).toEqual([
+      'f: A figure here grows beyond all bounds: look for a division by nothing or a very large figure among the inputs',
+    ]);
+    expect(session.state('g')).toBe('waits');
+    expect(everyFigure(session).every(Number.isFinite)).toBe(true);
+  });
+});
