@@ -36,7 +36,8 @@ export function orderNodes(document: GraphDocument): NodeOrder {
     (readers.get(id) ?? []).filter((next) => !placed.has(next));
   const loops = new Map<string, readonly string[]>();
   const behindLoops = new Set<string>();
-  for (const component of stronglyConnected(rest, within)) {
+  // The components come with readers before sources; turned round, each stands behind what it reads.
+  for (const component of stronglyConnected(rest, within).reverse()) {
     const [first] = component;
     if (first === undefined) continue;
     const members = new Set(component);

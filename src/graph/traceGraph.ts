@@ -75,10 +75,8 @@ class GraphTracer {
     }
     const { order, loops, behindLoops } = orderNodes(this.document);
     for (const id of order) this.node(known.get(id) as NodeRecord);
-    for (const [id, loop] of loops) {
-      const around = [...loop, loop[0] as string].map((member) => `"${this.nameOf(member)}"`);
-      const shown = around.length > 8 ? [...around.slice(0, 4), '…', ...around.slice(-3)] : around;
-      this.query(id, 'loop', `The links run in a loop (${shown.join(' → ')}): remove one of them`);
+    for (const [id, shown] of this.shownLoops(loops)) {
+      this.query(id, 'loop', `The links run in a loop (${shown}): remove one of them`);
     }
     for (const id of [...loops.keys(), ...behindLoops]) {
       const record = known.get(id) as NodeRecord;
@@ -259,6 +257,21 @@ class GraphTracer {
       }
       return undefined;
     }
+  }
+
+  /** Each node's loop in words, made once for all nodes of a loop. */
+  private shownLoops(loops: ReadonlyMap<string, readonly string[]>): [id: string, shown: string][] {
+    const words = new Map<readonly string[], string>();
+    return [...loops].map(([id, loop]) => {
+      let shown = words.get(loop);
+      if (shown === undefined) {
+        const around = [...loop, loop[0] as string];
+        const some = around.length > 8 ? [...around.slice(0, 4), undefined, ...around.slice(-3)] : around;
+        shown = some.map((member) => (member === undefined ? '…' : `"${this.nameOf(member)}"`)).join(' → ');
+        words.set(loop, shown);
+      }
+      return [id, shown];
+    });
   }
 
   private query(owner: string | undefined, code: string, text: string): void {

@@ -120,15 +120,12 @@ function across(a: Scalar): Scalar {
 }
 
 function direction(y: Scalar, x: Scalar): Scalar {
-  const size = y.absolute().plus(x.absolute());
-  return arctangent(
-    guard(
-      y,
-      size.above(0),
-      say('no-direction')`The formula asks for the direction of a vector of length ${size}: give it a length`,
-    ),
-    x,
-  );
+  const angle = arctangent(y, x);
+  const size = hypotenuse(x, y);
+  const query = say(
+    'no-direction',
+  )`The formula asks for the direction of a vector of length ${size}: give it a length`;
+  return guard(angle, size.above(0), query);
 }
 
 /** The greatest exponent: beyond it a power says nothing about buildings, and soon is no number. */

@@ -139,7 +139,7 @@ function bracketDepth(text: string): number {
 }
 
 function describe(value: unknown): string {
-  return typeof value === 'string' ? `the text "${clip(value)}"` : String(value);
+  return typeof value === 'string' ? `the text "${clip(value)}"` : `the value ${value}`;
 }
 
 function clip(text: string): string {
