@@ -18,6 +18,8 @@ const FLOORS: readonly (readonly [folder: string, floor: number])[] = [
   ['editor', 7],
 ];
 
+const PACKAGE = 'package ';
+
 interface Import {
   readonly from: string;
   readonly to: string;
@@ -40,17 +42,25 @@ const files = FLOORS.map(([folder]) => folder)
     }
   });
 
-const imports: Import[] = files.flatMap((file) => {
+const allImports: Import[] = files.flatMap((file) => {
   const text = readFileSync(join(ROOT, file), 'utf8');
   const found = text.matchAll(
-    /(?:^|\n)(?:import|export)\s+(type\s)?[^'"`;]*?from\s+'(\.[^']+)'|import\('(\.[^']+)'\)/g,
+    /(?:^|\n)(?:import|export)\s+(?:(type\s)?[^'"`;]*?from\s+)?'([^']+)'|import\('([^']+)'\)/g,
   );
   return [...found].map(([, type, named, dynamic]) => ({
     from: file,
-    to: relative(ROOT, normalize(join(ROOT, dirname(file), (named ?? dynamic) as string))),
+    to: targetOf(file, (named ?? dynamic) as string),
     typeOnly: type !== undefined,
   }));
 });
+
+const imports = allImports.filter(({ to }) => !to.startsWith(PACKAGE));
+
+/** The file that is imported, from the root; or the package, marked as one. */
+function targetOf(file: string, specifier: string): string {
+  if (!specifier.startsWith('.')) return PACKAGE + specifier;
+  return relative(ROOT, normalize(join(ROOT, dirname(file), specifier)));
+}
 
 function floorOf(file: string): readonly [string, number] | undefined {
   return FLOORS.find(([folder]) => file.startsWith(`${folder}/`));
@@ -87,4 +97,44 @@ describe('a module', () => {
     });
     expect(wrong).toEqual([]);
   });
+
+  it('below the command line and the editor takes nothing from Node, so that it runs in a browser', () => {
+    const fromNode = allImports.filter(({ to }) => /^package (node:|fs|path|process)/.test(to));
+    expect(fromNode.map(({ from }) => from)).toContain('src/cli/call.ts');
+    expect(fromNode.filter(({ from }) => (floorOf(from)?.[1] ?? 7) < 7)).toEqual([]);
+  });
+
+  it('does not wait for itself: no values are imported in a circle', () => {
+    expect(circleIn(imports.filter(({ typeOnly }) => !typeOnly))).toBeUndefined();
+  });
 });
+
+describe('the search for circles', () => {
+  const edge = (from: string, to: string): Import => ({ from, to, typeOnly: false });
+
+  it('finds one, and says how it runs', () => {
+    expect(circleIn([edge('a', 'b'), edge('b', 'c'), edge('c', 'b')])).toBe('b → c → b');
+    expect(circleIn([edge('a', 'a')])).toBe('a → a');
+    expect(circleIn([edge('a', 'b'), edge('a', 'c'), edge('b', 'c')])).toBeUndefined();
+  });
+});
+
+/** The first circle of imports, depth first. */
+function circleIn(edges: readonly Import[]): string | undefined {
+  const done = new Set<string>();
+  const visit = (file: string, way: readonly string[]): string | undefined => {
+    if (way.includes(file)) return [...way.slice(way.indexOf(file)), file].join(' → ');
+    if (done.has(file)) return undefined;
+    for (const { from, to } of edges) {
+      const circle = from === file ? visit(to, [...way, file]) : undefined;
+      if (circle !== undefined) return circle;
+    }
+    done.add(file);
+    return undefined;
+  };
+  for (const { from } of edges) {
+    const circle = visit(from, []);
+    if (circle !== undefined) return circle;
+  }
+  return undefined;
+}

@@ -55,9 +55,14 @@ export function readSystem(text: string): System {
   throw new CallError(`--units is SI or US, not "${text}"`);
 }
 
+/** Words of a file on one line, without the signs that would move a terminal's cursor or colour it. */
+export function oneLine(text: string): string {
+  return text.replace(/[\p{Cc}\p{Zl}\p{Zp}]+/gu, ' ');
+}
+
 /** A query as it is printed: the node's name, then the text. */
 export function queryLine(session: Session, query: Query, system: System): string {
   const record = query.owner === undefined ? undefined : nodesById(session.document).get(query.owner);
   const where = record === undefined ? 'graph' : `${nodeName(record, session.library)} (${record.id})`;
-  return `${where}: ${queryText(query, system)}`;
+  return oneLine(`${where}: ${queryText(query, system)}`);
 }

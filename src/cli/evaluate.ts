@@ -1,7 +1,7 @@
 import { type Reading, readings, type Session, type Slider, sliders } from '../graph/index.ts';
 import { measures, printQuantity, QuantityError, readMeasure, type System } from '../quantity/index.ts';
 import { queryText } from '../tape/index.ts';
-import { CallError, type Output, openGraph, queryLine, readArguments, readSystem } from './call.ts';
+import { CallError, type Output, oneLine, openGraph, queryLine, readArguments, readSystem } from './call.ts';
 
 /** `skewback evaluate FILE`: a graph's readings. Exit status 3 where a query stands in the way of one. */
 export function evaluate(args: readonly string[], out: Output): number {
@@ -39,6 +39,9 @@ function setSlider(session: Session, assignment: string, out: Output, system: Sy
   const at = assignment.indexOf('=');
   if (at < 1) throw new CallError(`--set takes NAME=QUANTITY, for example span="32 m", not "${assignment}"`);
   const slider = byName(sliders(session), assignment.slice(0, at), 'slider of the rail');
+  if (session.document.links.some(({ to }) => to[0] === slider.id && to[1] === 'value')) {
+    throw new CallError(`--set ${slider.name}: a link brings its value: set what the link comes from`);
+  }
   const text = assignment.slice(at + 1).trim();
   let value: number;
   try {
@@ -50,9 +53,9 @@ function setSlider(session: Session, assignment: string, out: Output, system: Sy
   const { lower = Number.NEGATIVE_INFINITY, upper = Number.POSITIVE_INFINITY } = slider;
   if (value < lower || value > upper) {
     const bound = value < lower ? lower : upper;
-    out.error(
-      `${slider.name} is set beyond the ${value < lower ? 'lower' : 'upper'} bound of its slider, ${printQuantity(bound, slider.measure, system)}`,
-    );
+    const which = value < lower ? 'lower' : 'upper';
+    const shown = printQuantity(bound, slider.measure, system);
+    out.error(oneLine(`${slider.name} is set beyond the ${which} bound of its slider, ${shown}`));
   }
   session.edit({ edit: 'set-value', id: slider.id, input: 'value', text });
 }
@@ -93,11 +96,11 @@ function pullOn(session: Session, reading: Reading): Pulled {
   return { reading, pulls };
 }
 
-function pullLine(reading: Reading, { slider, value }: Pull, system: System): string {
-  if (value === undefined) return `${slider.name}: none`;
+function pullText(reading: Reading, { slider, value }: Pull, system: System): string {
+  if (value === undefined) return 'none';
   const [above, below] = [reading.measure.units[system], slider.measure.units[system]];
   const shown = printQuantity((value * below.factor) / above.factor, measures.number, system);
-  return `${slider.name}: ${shown} ${ratioOf(above.symbol || '1', below.symbol || '1')}`;
+  return `${shown} ${ratioOf(above.symbol || '1', below.symbol || '1')}`;
 }
 
 /** The unit of one quantity for each of another: "N·m/m"; a plain number has the unit 1. */
@@ -123,10 +126,19 @@ function asJson(session: Session, found: readonly Reading[], pulled: Pulled | un
       ? {}
       : {
           pull: Object.fromEntries(
-            pulled.pulls.map(({ slider, value, unit }) => [slider.name, { value: value ?? null, unit }]),
+            pulled.pulls.map(({ slider, value, unit }) => [
+              keyOf(slider, pulled.pulls),
+              { value: value ?? null, unit },
+            ]),
           ),
         }),
   };
+}
+
+/** A slider's name, with its id where another has the same. */
+function keyOf({ id, name }: Slider, pulls: readonly Pull[]): string {
+  const shared = pulls.some(({ slider }) => slider.id !== id && slider.name === name);
+  return shared ? `${name} (${id})` : name;
 }
 
 function quantityJson(value: number | undefined, { measure }: Reading, system: System) {
@@ -151,11 +163,14 @@ function printReadings(
     const bound =
       limit?.value === undefined ? '' : `, ${limit.rule} ${printQuantity(limit.value, measure, system)}`;
     const verdict = meets === undefined ? '' : meets ? ': met' : ': not met';
-    out.print(`${name}: ${shown}${bound}${verdict}\n`);
+    out.print(`${oneLine(name)}: ${shown}${bound}${verdict}\n`);
   }
   if (pulled !== undefined) {
-    out.print(`Pull on ${pulled.reading.name}\n`);
-    for (const pull of pulled.pulls) out.print(`  ${pullLine(pulled.reading, pull, system)}\n`);
+    out.print(`Pull on ${oneLine(pulled.reading.name)}\n`);
+    for (const pull of pulled.pulls) {
+      const name = oneLine(keyOf(pull.slider, pulled.pulls));
+      out.print(`  ${name}: ${pullText(pulled.reading, pull, system)}\n`);
+    }
   }
   for (const query of session.queries) out.error(queryLine(session, query, system));
 }

@@ -1,4 +1,4 @@
-import { CallError, type Output } from './call.ts';
+import { CallError, type Output, oneLine } from './call.ts';
 import { check } from './check.ts';
 import { evaluate } from './evaluate.ts';
 import { nodes } from './nodes.ts';
@@ -46,7 +46,7 @@ export function main(args: readonly string[], out: Output = standardOutput): num
     return command(rest, out);
   } catch (error) {
     if (!(error instanceof CallError)) throw error;
-    out.error(error.message);
+    out.error(oneLine(error.message));
     return 2;
   }
 }

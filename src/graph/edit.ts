@@ -18,8 +18,10 @@ export type Edit =
       readonly setting: string;
       readonly value: string | boolean | undefined;
     }
-  | { readonly edit: 'add-link'; readonly link: Link; readonly at?: number }
-  | { readonly edit: 'remove-link'; readonly link: Link }
+  /** `again`: puts back one of several equal links, which a file may hold. */
+  | { readonly edit: 'add-link'; readonly link: Link; readonly at?: number; readonly again?: true }
+  /** `at`: which one is meant where several are equal. */
+  | { readonly edit: 'remove-link'; readonly link: Link; readonly at?: number }
   | { readonly edit: 'set-rail'; readonly rail: readonly string[] }
   /** A member of the document other than its nodes, links and rail. */
   | { readonly edit: 'set-member'; readonly member: string; readonly value: unknown; readonly at?: number }
@@ -54,7 +56,7 @@ export function apply(document: GraphDocument, edit: Edit): Applied {
       const before = own(node.values, edit.input);
       return {
         document: replaced(document, withMember(node, 'values', edit.input, edit.text)),
-        inverse: takesOut(edit.text, before) ? { edit: 'change-node', node } : { ...edit, text: before },
+        inverse: stays(edit.text, before) ? { ...edit, text: before } : { edit: 'change-node', node },
       };
     }
     case 'set-setting': {
@@ -62,24 +64,26 @@ export function apply(document: GraphDocument, edit: Edit): Applied {
       const before = own(node.settings, edit.setting);
       return {
         document: replaced(document, withMember(node, 'settings', edit.setting, edit.value)),
-        inverse: takesOut(edit.value, before) ? { edit: 'change-node', node } : { ...edit, value: before },
+        inverse: stays(edit.value, before) ? { ...edit, value: before } : { edit: 'change-node', node },
       };
     }
     case 'add-link': {
       const at = edit.at ?? document.links.length;
-      if (findLink(document, edit.link) !== -1) throw new EditError('the link is there already');
+      if (edit.again !== true && findLink(document, edit.link) !== -1) {
+        throw new EditError('the link is there already');
+      }
       return {
         document: { ...document, links: document.links.toSpliced(at, 0, edit.link) },
-        inverse: { edit: 'remove-link', link: edit.link },
+        inverse: { edit: 'remove-link', link: edit.link, at },
       };
     }
     case 'remove-link': {
-      const at = findLink(document, edit.link);
+      const at = findLink(document, edit.link, edit.at);
       const link = document.links[at];
       if (link === undefined) throw new EditError('there is no such link');
       return {
         document: { ...document, links: document.links.toSpliced(at, 1) },
-        inverse: { edit: 'add-link', link, at },
+        inverse: { edit: 'add-link', link, at, again: true },
       };
     }
     case 'set-rail':
@@ -121,9 +125,12 @@ export function changesOnlyValues(edit: Edit): boolean {
   return edit.edit === 'set-value';
 }
 
-/** Whether a member goes out: put back by itself it would stand behind the others, so the whole record comes back. */
-function takesOut(value: unknown, before: unknown): boolean {
-  return value === undefined && before !== undefined;
+/**
+ * Whether a member keeps its place, so that its old value takes the edit back. One that comes or goes may take its
+ * group of members with it, and put back by itself it would stand behind the others: the whole record comes back.
+ */
+function stays(value: unknown, before: unknown): boolean {
+  return value !== undefined && before !== undefined;
 }
 
 function addNode(document: GraphDocument, node: NodeRecord, at: number): Applied {
@@ -171,8 +178,10 @@ function find(document: GraphDocument, id: string): NodeRecord {
   return node;
 }
 
-function findLink(document: GraphDocument, link: Link): number {
-  return document.links.findIndex(({ from, to }) => sameEnd(from, link.from) && sameEnd(to, link.to));
+function findLink({ links }: GraphDocument, link: Link, at = -1): number {
+  const same = (other: Link | undefined): boolean =>
+    other !== undefined && sameEnd(other.from, link.from) && sameEnd(other.to, link.to);
+  return same(links[at]) ? at : links.findIndex(same);
 }
 
 function replaced(document: GraphDocument, node: NodeRecord): GraphDocument {

@@ -7,7 +7,15 @@ import { documentSchema } from './schema.ts';
 /** Thrown where a file is no graph that can be read; the message says where and why. */
 export class FileError extends Error {
   override name = 'FileError';
+
+  /** @param message may quote the file: it is brought to one line of readable length. */
+  constructor(message: string) {
+    const line = message.replace(/[\p{Cc}\p{Zl}\p{Zp}]+/gu, ' ');
+    super(line.length <= LONGEST ? line : `${line.slice(0, LONGEST - 1)}…`);
+  }
 }
+
+const LONGEST = 400;
 
 /**
  * Reads a graph file: checks its size, migrates it from earlier versions, checks its shape. What is in the

@@ -6,6 +6,8 @@ export const LIMITS = {
   depth: 64,
   nodes: 50_000,
   links: 200_000,
+  /** Operations that all nodes together write: lists that double from node to node would write without end. */
+  operations: 2_000_000,
   /** Signs of a formula. */
   formula: 1_000,
   /** Levels of brackets in a formula. */

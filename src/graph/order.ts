@@ -107,7 +107,7 @@ function stronglyConnected(ids: readonly string[], next: (id: string) => readonl
       const parent = visits.at(-1);
       if (parent !== undefined) lowest.set(parent.id, Math.min(low(parent.id), low(id)));
       if (low(id) !== number.get(id)) continue;
-      const component = open.splice(open.indexOf(id));
+      const component = open.splice(open.lastIndexOf(id));
       for (const member of component) isOpen.delete(member);
       components.push(component);
     }

@@ -88,7 +88,8 @@ function measureFor(session: Session, record: NodeRecord): Measure {
   const { live } = session;
   const link = session.document.links.find(({ to }) => to[0] === record.id && to[1] === 'value');
   const source = link === undefined ? undefined : live.traced.nodes.get(link.from[0]);
-  const spec = link === undefined ? undefined : source?.type?.outputs[link.from[1]];
+  const specs = source?.type?.outputs ?? {};
+  const spec = link !== undefined && Object.hasOwn(specs, link.from[1]) ? specs[link.from[1]] : undefined;
   const scalar = live.scalarOf(record.id, 'value');
   return spec?.kind.measure ?? (scalar === undefined ? measures.number : measureOf(scalar.dimension));
 }

@@ -70,7 +70,7 @@ export class Session {
     const last = this.undoable.at(-1);
     if (gesture !== undefined && last?.gesture === gesture) {
       this.undoable[this.undoable.length - 1] = {
-        inverse: { edit: 'several', edits: [inverse, last.inverse] },
+        inverse: joined(inverse, last.inverse),
         gesture,
       };
     } else {
@@ -97,9 +97,10 @@ export class Session {
   }
 
   private turnBack(from: Step[], to: Step[]): void {
-    const step = from.pop();
+    const step = from.at(-1);
     if (step === undefined) return;
     const { document, inverse } = apply(this.current, step.inverse);
+    from.pop();
     to.push({ inverse, gesture: undefined });
     this.follow(document, step.inverse);
   }
@@ -134,6 +135,24 @@ export class Session {
     }
     return values;
   }
+}
+
+/**
+ * What takes back a later edit and then an earlier one. A slider's drag comes to thousands of edits of one figure:
+ * the earliest takes all of them back.
+ */
+function joined(later: Edit, earlier: Edit): Edit {
+  const edits = earlier.edit === 'several' ? earlier.edits : [earlier];
+  const onlyFigures = edits.every(({ edit }) => edit === 'set-value' || edit === 'change-node');
+  if (later.edit === 'set-value' && onlyFigures) {
+    const covered = edits.some((one) =>
+      one.edit === 'set-value'
+        ? one.id === later.id && one.input === later.input
+        : one.edit === 'change-node' && one.node.id === later.id,
+    );
+    if (covered) return earlier;
+  }
+  return { edit: 'several', edits: [...(later.edit === 'several' ? later.edits : [later]), ...edits] };
 }
 
 /** A typed figure's new value, where it is one of the same dimension. */

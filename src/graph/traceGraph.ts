@@ -2,7 +2,8 @@ import { type Measure, nameDimension, QuantityError, readMeasure, readQuantity }
 import { plainQuery, type Query, Refusal, type Scalar, Trace } from '../tape/index.ts';
 import type { InputSpec, InputSpecs, Library, NodeType, OutputSpec } from './define.ts';
 import { type GraphDocument, type Link, type NodeRecord, nodesById } from './document.ts';
-import { conversion, type Kind } from './kind.ts';
+import { conversion, type Kind, scalarsIn } from './kind.ts';
+import { LIMITS } from './limits.ts';
 import { orderNodes } from './order.ts';
 
 /** A typed figure of a node that is an input of the tape: changing it only runs the tape. */
@@ -47,7 +48,7 @@ export function traceGraph(document: GraphDocument, library: Library): TracedGra
 class GraphTracer {
   private readonly document: GraphDocument;
   private readonly library: Library;
-  private readonly trace = new Trace();
+  private readonly trace = new BoundedTrace();
   private readonly nodes = new Map<string, TracedNode>();
   private readonly figures: TypedFigure[] = [];
   private readonly queries: Query[] = [];
@@ -116,10 +117,12 @@ class GraphTracer {
       inputs = { ...type.inputs, ...more };
       const values = this.inputValues(record, inputs);
       if (values === undefined || this.queries.length > faults) return;
-      outputs = type.trace(pick(values, type.inputs), settings, {
+      const given = type.trace(pick(values, type.inputs), settings, {
         trace: this.trace,
         more: pick(values, more),
       });
+      this.check(type, given);
+      outputs = given;
     });
     this.trace.owner = undefined;
     this.keep(record, type, inputs, outputs);
@@ -133,6 +136,17 @@ class GraphTracer {
   ): void {
     const sources = (this.linksInto.get(record.id) ?? []).map(({ from }) => from[0]);
     this.nodes.set(record.id, { record, type, inputs, sources, outputs });
+  }
+
+  /** Throws where a node does not give what it declares: that is a query here, and not at the next node. */
+  private check(type: NodeType, given: Readonly<Record<string, unknown>> | undefined): void {
+    for (const [name, { many }] of Object.entries(type.outputs)) {
+      const value = given?.[name];
+      if (value === undefined || (many && !Array.isArray(value))) {
+        throw new Error(`it gives no ${many ? 'list ' : ''}"${name}"`);
+      }
+      this.trace.mustOwn(scalarsIn(value));
+    }
   }
 
   /** The value of every input; undefined where one waits for a node that is at fault. */
@@ -172,7 +186,7 @@ class GraphTracer {
       for (const link of links) {
         const found = this.attempt(record, () => this.brought(link, spec));
         if (found === undefined) waits = true;
-        else brought.push(...found);
+        else for (const value of found) brought.push(value);
       }
       values[name] = spec.arity === 'many' ? brought : brought[0];
     }
@@ -215,7 +229,12 @@ class GraphTracer {
         `A list of ${list.length} is linked to input "${spec.title}", which takes one ${spec.kind.name}: link a single output`,
       );
     }
-    return list.map((one) => convert(one, this.trace));
+    try {
+      return list.map((one) => convert(one, this.trace));
+    } catch (error) {
+      if (!(error instanceof Refusal)) throw error;
+      throw new Refusal(error.code, `Input "${spec.title}": ${error.message}: link another output`);
+    }
   }
 
   /** The value of an input without a link: what is typed, or its default, or nothing where it may be empty. */
@@ -281,6 +300,25 @@ class GraphTracer {
   private nameOf(id: string): string {
     const record = nodesById(this.document).get(id);
     return record === undefined ? id : nodeName(record, this.library);
+  }
+}
+
+/** A trace on which nodes can write no more than the limit. */
+class BoundedTrace extends Trace {
+  private written = 0;
+
+  override apply(...[code, a, b, c]: Parameters<Trace['apply']>): Scalar {
+    // What no node writes, such as a gradient, is bounded by what the nodes wrote.
+    if (this.owner !== undefined) {
+      this.written += 1;
+      if (this.written > LIMITS.operations) {
+        throw new Refusal(
+          'too-large',
+          `with this node the graph comes to more than ${LIMITS.operations / 1e6} million operations: link fewer points and loads, or take nodes out`,
+        );
+      }
+    }
+    return super.apply(code, a, b, c);
   }
 }
 

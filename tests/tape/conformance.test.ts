@@ -2,99 +2,127 @@ import { describe, expect, it } from 'vitest';
 import { NONE } from '../../src/quantity/index.ts';
 import {
   Block,
-  evaluate,
   finish,
-  operation,
+  type Kernels,
+  Op,
+  operations,
+  outputsOf,
+  plainKernels,
   registersFor,
   run,
-  STRIDE,
-  type Tape,
+  type Scalar,
   Trace,
 } from '../../src/tape/index.ts';
-import { randomFrom } from '../support/random.ts';
-import { randomProgram, SPECIAL } from './programs.ts';
+import { conforms, type Way } from './conformance.ts';
 
-/** One way of running a tape for a list of variants; the suite below serves every one of them. */
-interface Way {
-  readonly name: string;
-  run(tape: Tape, variants: readonly (readonly number[])[]): number[][];
-}
-
-const ways: readonly Way[] = [
-  {
-    name: 'one by one',
-    run: (tape, variants) => variants.map((inputs) => [...evaluate(tape, inputs)]),
+const oneByOne: Way = {
+  name: 'one by one',
+  prepare(tape) {
+    const registers = registersFor(tape);
+    return {
+      width: 64,
+      run(inputs, count) {
+        const results = Array.from(tape.outputs, (): number[] => []);
+        for (let i = 0; i < count; i++) {
+          const given = inputs.map((input) => (typeof input === 'number' ? input : (input[i] as number)));
+          run(tape, given, registers);
+          for (const [k, value] of outputsOf(tape, registers).entries()) results[k]?.push(value);
+        }
+        return results;
+      },
+    };
   },
-  ...[1, 7, 64, 1024].map((width) => ({
-    name: `in plain JavaScript blocks of ${width}`,
-    run(tape: Tape, variants: readonly (readonly number[])[]) {
-      const block = new Block(tape, width);
-      const results: number[][] = [];
-      for (let start = 0; start < variants.length; start += width) {
-        const part = variants.slice(start, start + width);
-        const rows = tape.inputs.map((_, k) => part.map((inputs) => inputs[k] as number));
-        const outputs = block.run(rows, part.length);
-        results.push(...part.map((_, i) => outputs.map((row) => row[i] as number)));
-      }
-      return results;
-    },
-  })),
-];
+};
 
-/** The reference: the table of operations, one instruction after the other. */
-function reference(tape: Tape, inputs: readonly number[]): number[] {
-  const registers = [...inputs, ...tape.constants];
-  for (let at = 0; at < tape.code.length; at += STRIDE) {
-    const [code = -1, a = -1, b = -1, c = -1] = tape.code.subarray(at, at + STRIDE);
-    const value = (register: number): number => registers[register] ?? Number.NaN;
-    registers.push(operation(code).value(value(a), value(b), value(c)));
-  }
-  return Array.from(tape.outputs, (register) => registers[register] as number);
+function inBlocks(width: number, name: string, kernels?: Kernels): Way {
+  return {
+    name: `in ${name} of ${width}`,
+    prepare(tape) {
+      const block = new Block(tape, width, kernels);
+      return { width, run: (inputs, count) => block.run(inputs, count).map((row) => [...row]) };
+    },
+  };
 }
 
-describe.each(ways)('running $name', (way) => {
-  it('gives the same bits as the table of operations on 200 random programs with special values', () => {
-    for (let seed = 0; seed < 200; seed++) {
-      const tape = randomProgram(seed);
-      const random = randomFrom(seed + 1e6);
-      const variants = Array.from({ length: 20 }, () =>
-        tape.inputs.map(() =>
-          random(0, 1) < 0.4 ? (SPECIAL[random.whole(0, SPECIAL.length - 1)] as number) : random(-10, 10),
-        ),
-      );
-      for (const [i, found] of way.run(tape, variants).entries()) {
-        const wanted = reference(tape, variants[i] as number[]);
-        const wrong = found.findIndex((value, k) => !Object.is(value, wanted[k]));
-        expect(wrong, `program ${seed}, variant ${i}: ${found[wrong]}, not ${wanted[wrong]}`).toBe(-1);
-      }
-    }
-  });
-});
+conforms(oneByOne);
+for (const width of [1, 7, 64, 1024]) conforms(inBlocks(width, 'plain JavaScript blocks'));
 
 describe('a block', () => {
   const trace = new Trace();
   const [x, y] = [trace.input('x', NONE), trace.input('y', NONE)];
   const tape = finish(trace, [x.times(y).plus(1), x.times(y).squared(), y]);
 
-  it('takes one value for all variants or one for each, and can be run again', () => {
+  it('takes no more variants than its width, and no fewer values than variants', () => {
     const block = new Block(tape, 8);
-    expect([...(block.run([3, [1, 2, 4]], 3)[0] ?? [])]).toEqual([4, 7, 13]);
-    expect([...(block.run([[1, 2], -1], 2)[1] ?? [])]).toEqual([1, 4]);
-    expect([...(block.run([0, 5], 1)[2] ?? [])]).toEqual([5]);
+    expect(() => block.run([1, 2], 9)).toThrow('the block takes 8 variants at a time, not 9');
+    expect(() => block.run([1, [1, 2]], 3)).toThrow('input 1 has 2 values, not 3');
+    expect(() => block.run([new Float64Array(), 1], 1)).toThrow('input 0 has 0 values, not 1');
+    // A refusal leaves it fit for the next run.
+    expect(block.run([3, [1, 2, 4]], 3).map((row) => [...row])).toEqual([
+      [4, 7, 13],
+      [9, 36, 144],
+      [1, 2, 4],
+    ]);
   });
 
-  it('says how many variants and inputs it takes', () => {
-    const block = new Block(tape, 8);
-    expect(() => block.run([1, 2], 9)).toThrow('8 variants at a time, not 9');
-    expect(() => block.run([1], 1)).toThrow('2 inputs, not 1');
-    expect(() => block.run([1, [1, 2]], 3)).toThrow('input 1 has 2 values, not 3');
-    expect(() => run(tape, [1], registersFor(tape))).toThrow('2 inputs, not 1');
+  it('leaves the rows that it is given as they are', () => {
+    const block = new Block(tape, 4);
+    const row = Float64Array.of(1, 2, 3, 4);
+    block.run([row, 2], 4);
+    expect([...row]).toEqual([1, 2, 3, 4]);
   });
 
   it('uses rows again that nothing reads any more', () => {
     const long = new Trace();
     let value = long.input('x', NONE);
     for (let i = 0; i < 1000; i++) value = value.sine().plus(1);
-    expect(new Block(finish(long, [value]), 4).rows).toBeLessThan(6);
+    // The input, the constant 1, and the two results that are alive at a time at the most.
+    expect(new Block(finish(long, [value]), 4).rows).toBeLessThanOrEqual(4);
+  });
+
+  it('keeps a row for each value that is still wanted', () => {
+    const wide = new Trace();
+    const input = wide.input('x', NONE);
+    const values: Scalar[] = [];
+    for (let i = 1; i <= 50; i++) values.push(input.times(i).sine());
+    const [first, ...others] = [...values, ...values.toReversed()] as [Scalar, ...Scalar[]];
+    const total = others.reduce((sum, term) => sum.times(0.5).plus(term), first);
+    const [row] = new Block(finish(wide, [total, ...values]), 2).run([[0.3, 0.7]], 2);
+    for (const [i, at] of [0.3, 0.7].entries()) {
+      const sines = Array.from({ length: 50 }, (_, k) => Math.sin(at * (k + 1)));
+      expect(row?.[i]).toBe([...sines, ...sines.toReversed()].reduce((sum, term) => sum * 0.5 + term));
+    }
+  });
+
+  it('says which operation its kernels lack', () => {
+    const kernels = new Map([...plainKernels].filter(([code]) => code !== Op.multiply));
+    expect(() => new Block(tape, 4, kernels).run([1, 2], 1)).toThrow('no kernel for multiply');
+  });
+});
+
+describe('the plain kernels', () => {
+  it('are there for every operation of the table that can stand on a tape', () => {
+    const never = new Set<number>([Op.input, Op.constant, Op.mark, Op.guardSlope]);
+    expect([...plainKernels.keys()]).toEqual(
+      operations.map((_, code) => code).filter((code) => !never.has(code)),
+    );
+  });
+});
+
+describe('running one by one', () => {
+  it('refuses an operation that it does not know, as of a tape of a later version', () => {
+    const trace = new Trace();
+    const tape = finish(trace, [trace.input('x', NONE).sine()]);
+    const later = { ...tape, code: Int32Array.from(tape.code, (part, k) => (k === 0 ? 99 : part)) };
+    expect(() => run(later, [1], registersFor(later))).toThrow('no way to run operation 99');
+  });
+
+  it('keeps the constants in the registers from run to run', () => {
+    const trace = new Trace();
+    const tape = finish(trace, [trace.input('x', NONE).times(3)]);
+    const registers = registersFor(tape);
+    run(tape, [Number.NaN], registers);
+    run(tape, [2], registers);
+    expect([...outputsOf(tape, registers)]).toEqual([6]);
   });
 });

@@ -241,7 +241,7 @@ describe.each(rows)('$op as $formula with x in $x', (row) => {
   const random = randomFrom(rows.indexOf(row));
   // In 1024ths, which a decimal number holds exactly: the reference is then taken at the very same place.
   const figure = (from: number, to: number): number => Math.round(random(from, to) * 1024) / 1024;
-  const places = Array.from({ length: 9 }, () => ({ x: figure(...row.x), y: figure(...(row.y ?? [1, 2])) }));
+  const places = Array.from({ length: 16 }, () => ({ x: figure(...row.x), y: figure(...(row.y ?? [1, 2])) }));
   const symbols = bySymbols(row.formula);
   const wanted = new Map(places.map((place) => [place, symbols(place)]));
 
@@ -345,7 +345,7 @@ describe('a damped product', () => {
   it.each([Number.POSITIVE_INFINITY, Number.NaN, 3])(
     'is 0 where its first factor is, whatever %d does',
     (b) => {
-      expect([...evaluate(tape, [0, b])].slice(0, 2)).toEqual([0, 0]);
+      expect([...evaluate(tape, [0, b])]).toEqual([0, 0, 0]);
     },
   );
 

@@ -32,7 +32,8 @@ export function parseFormula(text: string): Expression {
   }
   let tree: MathNode;
   try {
-    tree = parse(text);
+    // A line's end behind it is no second expression.
+    tree = parse(text.trim());
   } catch (error) {
     return refuse(`the formula can't be read: ${(error as Error).message}`);
   }

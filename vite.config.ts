@@ -1,0 +1,7 @@
+import { defineConfig } from 'vite';
+
+export default defineConfig({
+  root: 'editor',
+  base: './',
+  build: { outDir: '../dist', emptyOutDir: true, target: 'es2023' },
+});
