@@ -3,5 +3,7 @@ import { defineConfig } from 'vite';
 export default defineConfig({
   root: 'editor',
   base: './',
-  build: { outDir: '../dist', emptyOutDir: true, target: 'es2023' },
+  // The hall's library is one large piece by itself, and loaded only once the hall is shown.
+  build: { outDir: '../dist', emptyOutDir: true, target: 'es2023', chunkSizeWarningLimit: 700 },
+  preview: { port: 5173 },
 });

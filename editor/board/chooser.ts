@@ -73,6 +73,8 @@ export class Chooser extends LitElement {
     `,
   ];
 
+  private ended = false;
+
   constructor() {
     super();
     this.choices = [];
@@ -85,7 +87,7 @@ export class Chooser extends LitElement {
   override firstUpdated(): void {
     const dialog = this.renderRoot.querySelector('dialog');
     dialog?.showModal();
-    dialog?.addEventListener('close', () => this.dispatchEvent(new CustomEvent('closed')));
+    dialog?.addEventListener('close', () => this.end());
     this.renderRoot.querySelector('input')?.focus();
   }
 
@@ -160,7 +162,14 @@ export class Chooser extends LitElement {
 
   private take(choice: Choice): void {
     this.dispatchEvent(new CustomEvent('chosen', { detail: choice.id }));
-    this.renderRoot.querySelector('dialog')?.close();
+    this.end();
+  }
+
+  /** The dialog's own event of closing comes late; whoever asked is told once, and at once. */
+  private end(): void {
+    if (this.ended) return;
+    this.ended = true;
+    this.dispatchEvent(new CustomEvent('closed'));
   }
 }
 

@@ -46,24 +46,23 @@ export function gradient(output: Scalar, inputs: readonly Scalar[]): readonly Sc
         const { query, owner } = trace.guards[third] ?? {};
         if (query === undefined) throw new Error(`no guard at operation ${i}`);
         const condition = new Condition(new Scalar(trace, second));
-        const guarded = trace.guard(Op.guard, scalar, condition, query, owner);
-        give(first, chosen ? unlessZero(scalar, guarded) : guarded, chosen);
+        const guarded = (value: Scalar) => trace.guard(Op.guard, value, condition, query, owner);
+        const one = trace.constant(1, NONE);
+        give(first, chosen ? trace.apply(Op.damp, scalar, guarded(one)) : guarded(scalar), chosen);
         break;
       }
       case Op.choose: {
         const condition = new Condition(new Scalar(trace, first));
-        const zero = trace.constant(0, scalar.dimension);
-        // A choice that was itself not chosen may have a condition that waits.
-        const sure = (weight: Scalar) => (chosen ? unlessZero(scalar, weight) : weight);
-        give(second, sure(condition.choose(scalar, zero)), true);
-        give(third, sure(condition.choose(zero, scalar)), true);
+        give(second, share(scalar, condition, chosen), true);
+        give(third, share(scalar, condition.not(), chosen), true);
         break;
       }
       case Op.damp: {
         const [a, b] = [new Scalar(trace, first), new Scalar(trace, second)];
         give(first, trace.apply(Op.damp, scalar, b), chosen);
         // The factor that damps is 0 for what was not chosen.
-        give(second, trace.apply(Op.damp, a, scalar), true);
+        const product = trace.apply(Op.damp, a, scalar);
+        give(second, chosen ? whereZero(scalar, trace.apply(Op.damp, scalar, a), product) : product, true);
         break;
       }
       default: {
@@ -95,10 +94,22 @@ interface Weight {
   readonly chosen: boolean;
 }
 
-/** `otherwise`, or 0 where the weight is 0: what was not chosen passes nothing back, even where it waits. */
-function unlessZero(weight: Scalar, otherwise: Scalar): Scalar {
-  const zero = weight.trace.constant(0, weight.dimension);
-  return weight.absolute().atMost(zero).choose(zero, otherwise);
+/**
+ * The weight of a branch of a choice: all where the branch is chosen, else 0.
+ *
+ * @param within a choice, which if it is itself not chosen may have a condition that waits: the weight 0 wins.
+ */
+function share(weight: Scalar, condition: Condition, within: boolean): Scalar {
+  const all = condition.choose(weight, weight.trace.constant(0, weight.dimension));
+  return within ? whereZero(weight, weight.trace.apply(Op.damp, weight, condition.scalar), all) : all;
+}
+
+/**
+ * `product` where the weight is 0, else `otherwise`. The product must have the weight for a factor: it is 0 then,
+ * but its slope is not, if the weight is 0 by chance and not because something else was chosen.
+ */
+function whereZero(weight: Scalar, product: Scalar, otherwise: Scalar): Scalar {
+  return weight.absolute().atMost(0).choose(product, otherwise);
 }
 
 /** Marks what depends on any of the inputs. */

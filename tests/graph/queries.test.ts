@@ -54,7 +54,7 @@ describe('what is wrong with a graph', () => {
       'a quantity of the wrong dimension',
       [length('a'), formula('f', 'a * a'), point('p')],
       ['a.value > f.a', 'f.result > p.up'],
-      ['p: An area is linked where a length is wanted'],
+      ['p: Input "Up": an area is linked where a length is wanted: link another output'],
     ],
     [
       'two links where one is taken',

@@ -11,7 +11,7 @@ import {
   sliders,
   writeGraph,
 } from '../../src/graph/index.ts';
-import { linkOf, open, openReady, READY, readyText, texts } from '../support/graphs.ts';
+import { everyFigure, graphOf, linkOf, open, openReady, READY, readyText, texts } from '../support/graphs.ts';
 import { randomFrom } from '../support/random.ts';
 
 const set = (id: string, text: string, input = 'value'): Edit => ({ edit: 'set-value', id, input, text });
@@ -26,6 +26,39 @@ describe('a live graph', () => {
     expect(session.value('moment', 'limit')).not.toBe(before);
     session.edit({ edit: 'set-setting', id: 'knee-moment', setting: 'rule', value: 'at most' });
     expect(session.live).not.toBe(live);
+  });
+
+  it.each<[string, Edit]>([
+    ['a link less', { edit: 'remove-link', link: linkOf('span.value > half.span') }],
+    ['a node more', { edit: 'add-node', node: { id: 'new', type: 'quantities/length' } }],
+    ['another name', { edit: 'change-node', node: { id: 'span', type: 'quantities/length', name: 'Width' } }],
+    ['a figure gone back to its default', { edit: 'set-value', id: 'span', input: 'value', text: undefined }],
+    ['another dimension', set('span', '20 kN')],
+    ['no figure', set('span', 'wide')],
+    ['a figure beyond all figures', set('span', '1e999 m')],
+    ['a figure for an input that is linked', set('c', '3 m', 'up')],
+  ])('is traced again for %s, and again when that is taken back', (_, edit) => {
+    const session = openReady('riding-barn');
+    const before = everyFigure(session);
+    const traced = session.live;
+    session.edit(edit);
+    const changed = session.live;
+    expect(changed).not.toBe(traced);
+    expect(everyFigure(session).every(Number.isFinite)).toBe(true);
+    session.undo();
+    expect(session.live).not.toBe(changed);
+    expect(session.queries).toEqual([]);
+    expect(everyFigure(session)).toEqual(before);
+  });
+
+  it('is only run for several figures at once, for undo and for redo', () => {
+    const session = openReady('riding-barn');
+    const { live } = session;
+    session.edit({ edit: 'several', edits: [set('span', '22 m'), set('eaves', '12 ft')] });
+    session.undo();
+    session.redo();
+    expect(session.live).toBe(live);
+    expect(session.value('eaves', 'value')).toBeCloseTo(3.6576, 12);
   });
 
   it('gives the same figures run again as it does traced anew', () => {
@@ -114,6 +147,85 @@ describe('undo', () => {
     expect(session.canUndo).toBe(false);
     session.redo();
     expect(session.document.nodes.find(({ id }) => id === 'span')?.values?.value).toBe('23 m');
+  });
+});
+
+describe('a long drag', () => {
+  const at = (i: number): string => `${20 + i / 5000} m`;
+
+  it('of 20,000 moves is one step, that runs the tape once when it is taken back', () => {
+    const session = openReady('riding-barn');
+    const before = session.document;
+    for (let i = 1; i <= 20_000; i++) session.edit(set('span', at(i)), 'drag');
+    const { live } = session;
+    let heard = 0;
+    session.subscribe(() => {
+      heard += 1;
+    });
+    session.undo();
+    expect(session.document).toEqual(before);
+    expect(session.canUndo).toBe(false);
+    session.redo();
+    expect(session.value('span', 'value')).toBe(24);
+    expect(session.live).toBe(live);
+    expect(heard).toBe(2);
+  });
+
+  it('of a key point moves two figures, one of which was not typed before', () => {
+    const session = open([{ id: 'p', type: 'setting-out/point', values: { up: '1 m' } }]);
+    const before = JSON.stringify(session.document);
+    for (let i = 1; i <= 3000; i++) {
+      const edits = [set('p', at(i), 'across'), set('p', at(-i), 'up')];
+      session.edit({ edit: 'several', edits }, 'drag');
+    }
+    expect(session.value('p', 'point')).toEqual({ x: 20.6, y: 19.4 });
+    session.undo();
+    expect(JSON.stringify(session.document)).toBe(before);
+    session.redo();
+    expect(session.value('p', 'point')).toEqual({ x: 20.6, y: 19.4 });
+  });
+
+  it('that goes through other edits is taken back with them', () => {
+    const session = openReady('riding-barn');
+    const before = JSON.stringify(session.document);
+    const span = session.document.nodes.find(({ id }) => id === 'span');
+    for (let i = 1; i < 6; i++) {
+      session.edit(set('span', at(i)), 'drag');
+      session.edit({ edit: 'change-node', node: { ...span, id: 'span', type: 'x/y', name: `${i}` } }, 'drag');
+      session.edit(set('eaves', at(i)), 'drag');
+      session.edit({ edit: 'set-rail', rail: [`${i}`] }, 'drag');
+    }
+    session.undo();
+    expect(JSON.stringify(session.document)).toBe(before);
+    expect(session.canUndo).toBe(false);
+  });
+});
+
+describe('a link that a file holds twice', () => {
+  const twice = graphOf(
+    [
+      { id: 'a', type: 'quantities/length' },
+      { id: 'p', type: 'setting-out/point' },
+    ],
+    ['a.value > p.up', 'a.value > p.up'],
+  );
+
+  it('can be taken off once, as its query asks, and put back', () => {
+    const session = new Session(twice, builtIn);
+    expect(texts(session)).toEqual(['p: Input "Up" takes one link and has 2: remove all but one']);
+    session.edit({ edit: 'remove-link', link: linkOf('a.value > p.up') });
+    expect(texts(session)).toEqual([]);
+    session.undo();
+    expect(session.document).toEqual(twice);
+    session.redo();
+    expect(texts(session)).toEqual([]);
+  });
+
+  it('goes with its node, and comes back with it', () => {
+    const session = new Session(twice, builtIn);
+    session.edit(removalOf(session.document, new Set(['a'])));
+    session.undo();
+    expect(session.document).toEqual(twice);
   });
 });
 

@@ -102,13 +102,13 @@ const rules = {
   choose: {
     parts: 3,
     write: (a, b, c) => a.below(b).choose(b, c),
-    value: (a, b, c) => (a < b ? b : c),
+    value: (a, b, c) => (a < b ? b : a >= b ? c : Number.NaN),
     slopes: (a, b) => (a < b ? [0, 1, 0] : [0, 0, 1]),
   },
   least: {
     parts: 2,
     write: (a, b) => a.least(b),
-    value: (a, b) => (a <= b ? a : b),
+    value: (a, b) => Math.min(a, b),
     slopes: (a, b) => (a <= b ? [1, 0] : [0, 1]),
   },
   guard: {
@@ -138,25 +138,29 @@ type Form = keyof typeof rules;
 const INPUTS = 3;
 const forms = Object.keys(rules) as Form[];
 
-function expressionOf(forms: readonly Form[]): fc.Arbitrary<Expression> {
-  return fc.letrec<{ tree: Expression; leaf: Expression; step: Expression }>((tie) => ({
-    tree: fc.oneof({ maxDepth: 5, depthSize: 'small' }, tie('leaf'), { arbitrary: tie('step'), weight: 4 }),
-    leaf: fc.oneof(
-      fc.record({ form: fc.constant('input' as const), which: fc.nat(INPUTS - 1) }),
+/** Expressions of the given forms, five deep at the most. */
+function expressionOf(among: readonly Form[]): fc.Arbitrary<Expression> {
+  const leaf: fc.Arbitrary<Expression> = fc.oneof(
+    fc.record({ form: fc.constant('input' as const), which: fc.nat(INPUTS - 1) }),
+    fc.record({
+      form: fc.constant('constant' as const),
       // Those that simplifying looks for, more often than others.
-      fc.record({
-        form: fc.constant('constant' as const),
-        value: fc.oneof(fc.constantFrom(0, 1, -1, 2, 0.5), figure()),
-      }),
-    ),
-    step: fc
-      .constantFrom(...forms)
-      .chain((form) =>
-        fc
-          .array(tie('tree'), { minLength: rules[form].parts, maxLength: rules[form].parts })
-          .map((parts) => ({ form, parts })),
-      ),
-  })).tree;
+      value: fc.oneof(fc.constantFrom(0, 1, -1, 2, 0.5), figure()),
+    }),
+  );
+  let tree = leaf;
+  for (let depth = 1; depth <= 5; depth++) {
+    const parts = tree;
+    const steps = among.map((form) => {
+      const length = rules[form].parts;
+      return fc.record({
+        form: fc.constant(form),
+        parts: fc.array(parts, { minLength: length, maxLength: length }),
+      });
+    });
+    tree = fc.oneof({ withCrossShrink: true }, { arbitrary: leaf, weight: 4 }, ...steps);
+  }
+  return tree;
 }
 
 /** A number of a few digits, so that a failure can be read. */
