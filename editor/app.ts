@@ -10,6 +10,7 @@ import {
 } from '../src/graph/index.ts';
 import { queryText } from '../src/tape/index.ts';
 import './board/board.ts';
+import type { Board } from './board/board.ts';
 import './elevation/elevation.ts';
 import { chooseFile, type FileHandle, saveFile } from './files/disk.ts';
 import { KeptWork } from './files/kept.ts';
@@ -253,11 +254,17 @@ export class App extends LitElement {
       ${session.queries.map((query) => {
         const record = query.owner === undefined ? undefined : known.get(query.owner);
         const where = record === undefined ? 'Graph' : nodeName(record, session.library);
-        return html`<button @click=${() => query.owner !== undefined && this.store.select([query.owner])}>
+        return html`<button @click=${() => query.owner !== undefined && void this.reveal(query.owner)}>
           <strong>${where}</strong>: ${queryText(query, system)}
         </button>`;
       })}
     </div>`;
+  }
+
+  private async reveal(id: string): Promise<void> {
+    if (this.large !== undefined && this.large !== 'board') this.large = undefined;
+    await this.updateComplete;
+    await this.renderRoot.querySelector<Board>('sk-board')?.reveal(id);
   }
 
   /** Opens what this window had when it was closed or crashed, or else a ready arch. */

@@ -1,15 +1,17 @@
 import { css, html, LitElement, nothing, render, svg, type TemplateResult } from 'lit';
 import type { SocketData } from 'rete-connection-plugin';
-import { type LinkEnd, nodeName, nodesById } from '../../src/graph/index.ts';
+import { type LinkEnd, nodeName, nodesById, tidyPlaces } from '../../src/graph/index.ts';
 import { queryText } from '../../src/tape/index.ts';
 import { controls } from '../look/controls.ts';
 import type { Store } from '../store/store.ts';
 import { Watch } from '../store/watch.ts';
+import { RubberBand } from './band.ts';
 import './chooser.ts';
 import type { Choice } from './chooser.ts';
 import { cloudAbout, linesOf } from './cloud.ts';
 import { fits, outputsFor } from './fits.ts';
 import { drawLinks, leader } from './links.ts';
+import { copySelection, paste } from './part.ts';
 import { placeOf, portPlace, rowsOf, SLIP, slipHeight } from './rows.ts';
 import { type Place, Skeleton } from './skeleton.ts';
 import './slip.ts';
@@ -18,6 +20,7 @@ import type { Slip } from './slip.ts';
 type Asking =
   | { readonly for: 'node'; readonly at: Place }
   | { readonly for: 'link'; readonly to: LinkEnd }
+  | { readonly for: 'find' }
   | undefined;
 
 /** Where nodes are laid out and linked. */
@@ -55,7 +58,17 @@ export class Board extends LitElement {
         left: 8px;
         top: 8px;
         display: flex;
+        flex-wrap: wrap;
         gap: 4px;
+      }
+      .rubber {
+        position: absolute;
+        border: 1px dashed var(--moved);
+        pointer-events: none;
+      }
+      .band-head {
+        fill: var(--ink-soft);
+        font-size: 22px;
       }
       svg.links {
         position: absolute;
@@ -128,6 +141,9 @@ export class Board extends LitElement {
       ${empty ? html`<p class="empty">The board is empty. Double-click it, or press N, to take a node from the stock.</p>` : nothing}
       <div class="tools">
         <button @click=${() => this.askForNode()} title="Take a node from the stock (N)">Add node</button>
+        <button @click=${() => this.tidy()} title="Put every node into its band (T)">Tidy</button>
+        <button @click=${() => (this.asking = { for: 'find' })} title="Find a node (Ctrl F)">Find</button>
+        ${this.selectionTools()}
         <button @click=${() => this.showAll()} title="Show the whole board (F)">Show all</button>
         <button @click=${() => void this.skeleton?.zoomBy(1.25)} aria-label="Larger">+</button>
         <button @click=${() => void this.skeleton?.zoomBy(0.8)} aria-label="Smaller">−</button>
@@ -164,6 +180,11 @@ export class Board extends LitElement {
       if (event.target === container || event.target === this.skeleton?.holder) this.store.select([]);
     });
     window.addEventListener('pointercancel', () => this.skeleton?.drop());
+    new RubberBand(container, (...box) => this.selectWithin(...box));
+    container.addEventListener('wheel', (event) => this.wheel(event), { capture: true, passive: false });
+    for (const name of ['copy', 'cut', 'paste'] as const) {
+      this.addEventListener(name, (event) => this.clip(event as ClipboardEvent));
+    }
   }
 
   override updated(): void {
@@ -235,20 +256,9 @@ export class Board extends LitElement {
 
   private letGo(id: string): void {
     if (!this.drag.has(id)) return;
-    const known = nodesById(this.store.document);
-    const edits = [...this.drag].flatMap(([moved, { x, y }]) => {
-      const node = known.get(moved);
-      return node === undefined
-        ? []
-        : [
-            {
-              edit: 'change-node' as const,
-              node: { ...node, place: [Math.round(x), Math.round(y)] as const },
-            },
-          ];
-    });
+    const places = new Map([...this.drag].map(([moved, { x, y }]) => [moved, [x, y] as const]));
     this.drag.clear();
-    this.store.edit({ edit: 'several', edits });
+    this.place(places);
   }
 
   /** Shows which ports would take the link that is being drawn. */
@@ -312,6 +322,125 @@ export class Board extends LitElement {
     });
   }
 
+  private selectionTools(): TemplateResult | typeof nothing {
+    const { selection } = this.store;
+    if (selection.size === 0) return nothing;
+    return html`
+      <button @click=${() => this.spread('sources')} title="Select what these read from, however far back (U)">
+        Upstream
+      </button>
+      <button @click=${() => this.spread('readers')} title="Select what reads from these, however far on (D)">
+        Downstream
+      </button>
+      <button @click=${() => this.duplicate()} title="A copy of these beside them (Ctrl D)">Duplicate</button>
+      ${
+        selection.size < 2
+          ? nothing
+          : html`<button @click=${() => this.align()} title="Put these beneath each other">Align</button>`
+      }
+      <button @click=${() => this.store.removeSelected()} title="Take these off the board (Delete)">Remove</button>
+    `;
+  }
+
+  private selectWithin(left: number, top: number, right: number, bottom: number): void {
+    const { store, skeleton } = this;
+    const from = skeleton?.placeAt(left, top);
+    const to = skeleton?.placeAt(right, bottom);
+    if (from === undefined || to === undefined) return;
+    const inside = store.document.nodes.filter(({ id }) => {
+      const [x, y] = placeOf(store, id);
+      const height = slipHeight(rowsOf(store, id).length);
+      return x < to.x && x + SLIP.width > from.x && y < to.y && y + height > from.y;
+    });
+    store.select(inside.map(({ id }) => id));
+  }
+
+  /** A trackpad's two fingers move the board; a mouse's wheel and a pinch, which the skeleton sees to, zoom it. */
+  private wheel(event: WheelEvent): void {
+    const byFingers = event.deltaX !== 0 || Math.abs(event.deltaY) < 40;
+    if (event.ctrlKey || event.deltaMode !== 0 || !byFingers) return;
+    event.preventDefault();
+    event.stopPropagation();
+    void this.skeleton?.pan(-event.deltaX, -event.deltaY);
+  }
+
+  private clip(event: ClipboardEvent): void {
+    if (isTyping(event)) return;
+    if (event.type === 'paste') {
+      const text = event.clipboardData?.getData('text/plain') ?? '';
+      if (paste(this.store, text)) event.preventDefault();
+      return;
+    }
+    const text = copySelection(this.store);
+    if (text === undefined) return;
+    event.clipboardData?.setData('text/plain', text);
+    event.preventDefault();
+    if (event.type === 'cut') this.store.removeSelected();
+  }
+
+  private duplicate(): void {
+    const text = copySelection(this.store);
+    if (text !== undefined) paste(this.store, text);
+  }
+
+  /** Selects, with the selection, all that it depends on, or all that depends on it. */
+  private spread(along: 'sources' | 'readers'): void {
+    const { document, selection } = this.store;
+    const [near, far] = along === 'sources' ? (['to', 'from'] as const) : (['from', 'to'] as const);
+    const found = new Set(selection);
+    const open = [...selection];
+    for (let id = open.pop(); id !== undefined; id = open.pop()) {
+      for (const link of document.links) {
+        const next = link[far][0];
+        if (link[near][0] !== id || found.has(next)) continue;
+        found.add(next);
+        open.push(next);
+      }
+    }
+    this.store.select(found);
+  }
+
+  private tidy(): void {
+    const { store } = this;
+    const places = tidyPlaces(store.document, store.session.library, {
+      width: SLIP.width,
+      gap: 24,
+      height: (id) => slipHeight(rowsOf(store, id).length),
+    });
+    this.place(places);
+    void this.updateComplete.then(() => this.showAll());
+  }
+
+  /** Puts the selection beneath each other, as its leftmost stands. */
+  private align(): void {
+    const { store } = this;
+    const ids = [...store.selection].toSorted((a, b) => placeOf(store, a)[1] - placeOf(store, b)[1]);
+    const x = Math.min(...ids.map((id) => placeOf(store, id)[0]));
+    let y = placeOf(store, ids[0] ?? '')[1];
+    const places = new Map<string, readonly [number, number]>();
+    for (const id of ids) {
+      places.set(id, [x, y]);
+      y += slipHeight(rowsOf(store, id).length) + 24;
+    }
+    this.place(places);
+  }
+
+  private place(places: ReadonlyMap<string, readonly [number, number]>, gesture?: string): void {
+    const known = nodesById(this.store.document);
+    const edits = [...places].flatMap(([id, [x, y]]) => {
+      const node = known.get(id);
+      return node === undefined
+        ? []
+        : [
+            {
+              edit: 'change-node' as const,
+              node: { ...node, place: [Math.round(x), Math.round(y)] as const },
+            },
+          ];
+    });
+    this.store.edit({ edit: 'several', edits }, gesture);
+  }
+
   private chooser(asking: Exclude<Asking, undefined>): TemplateResult {
     const closed = () => {
       this.asking = undefined;
@@ -326,6 +455,21 @@ export class Board extends LitElement {
           const id = this.store.addNode(event.detail, [x, y]);
           queueMicrotask(() => this.slips.get(id)?.focus());
         }}
+        @closed=${closed}
+      ></sk-chooser>`;
+    }
+    if (asking.for === 'find') {
+      const { document, session } = this.store;
+      return html`<sk-chooser
+        heading="Find a node"
+        empty="The board is empty."
+        .choices=${document.nodes.map((record) => ({
+          id: record.id,
+          title: nodeName(record, session.library),
+          group: session.library.find(record.type)?.title ?? record.type,
+          help: record.remark ?? '',
+        }))}
+        @chosen=${(event: CustomEvent<string>) => void this.reveal(event.detail)}
         @closed=${closed}
       ></sk-chooser>`;
     }
@@ -400,6 +544,15 @@ export class Board extends LitElement {
     this.askForNode(this.skeleton?.placeAt(event.clientX, event.clientY));
   }
 
+  /** Selects a node and brings it to the middle. */
+  async reveal(id: string): Promise<void> {
+    this.store.select([id]);
+    const [x, y] = placeOf(this.store, id);
+    const height = slipHeight(rowsOf(this.store, id).length);
+    await this.skeleton?.show(x - 300, y - 120, x + SLIP.width + 300, y + height + 120);
+    this.slips.get(id)?.focus({ preventScroll: true });
+  }
+
   /** Shows every node. */
   private async showAll(): Promise<void> {
     const { store, skeleton } = this;
@@ -414,10 +567,23 @@ export class Board extends LitElement {
   }
 
   private key(event: KeyboardEvent): void {
-    const path = event.composedPath();
-    const typing = path.some((part) => part instanceof HTMLInputElement || part instanceof HTMLSelectElement);
-    if (typing || event.ctrlKey || event.metaKey || event.altKey) return;
     const { store, skeleton } = this;
+    if (event.ctrlKey || event.metaKey) {
+      const commands: Record<string, () => void> = {
+        d: () => this.duplicate(),
+        f: () => {
+          this.asking = { for: 'find' };
+        },
+        a: () => store.select(store.document.nodes.map(({ id }) => id)),
+      };
+      const command = isTyping(event) ? undefined : commands[event.key.toLowerCase()];
+      if (command !== undefined) {
+        event.preventDefault();
+        command();
+      }
+      return;
+    }
+    if (isTyping(event) || event.altKey) return;
     const step = event.shiftKey ? 50 : 10;
     const arrows: Record<string, readonly [number, number]> = {
       ArrowLeft: [-step, 0],
@@ -435,6 +601,9 @@ export class Board extends LitElement {
     const actions: Record<string, () => void> = {
       n: () => this.askForNode(),
       f: () => void this.showAll(),
+      t: () => this.tidy(),
+      u: () => this.spread('sources'),
+      d: () => this.spread('readers'),
       '+': () => void skeleton?.zoomBy(1.25),
       '-': () => void skeleton?.zoomBy(0.8),
       Delete: () => store.removeSelected(),
@@ -451,16 +620,19 @@ export class Board extends LitElement {
   }
 
   private nudge([dx, dy]: readonly [number, number]): void {
-    const known = nodesById(this.store.document);
-    const edits = [...this.store.selection].flatMap((id) => {
-      const node = known.get(id);
+    const places = [...this.store.selection].map((id) => {
       const [x, y] = placeOf(this.store, id);
-      return node === undefined
-        ? []
-        : [{ edit: 'change-node' as const, node: { ...node, place: [x + dx, y + dy] as const } }];
+      return [id, [x + dx, y + dy] as const] as const;
     });
-    this.store.edit({ edit: 'several', edits }, 'nudge');
+    this.place(new Map(places), 'nudge');
   }
+}
+
+/** Whether an event comes from a field that is being typed into. */
+function isTyping(event: Event): boolean {
+  return event
+    .composedPath()
+    .some((part) => part instanceof HTMLInputElement || part instanceof HTMLSelectElement);
 }
 
 customElements.define('sk-board', Board);

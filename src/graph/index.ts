@@ -51,4 +51,5 @@ export { type Figures, type Mark, type SceneItem, sceneOf, type XY } from './sce
 export { documentSchema } from './schema.ts';
 export { Session } from './session.ts';
 export { choice, flag, optionalQuantity, type SettingForm, type SettingSpec, text } from './setting.ts';
+export { type SlipMeasures, tidyPlaces } from './tidy.ts';
 export { nodeName, readSettings, type TracedGraph, type TracedNode, traceGraph } from './traceGraph.ts';

@@ -53,8 +53,10 @@ export function gradient(output: Scalar, inputs: readonly Scalar[]): readonly Sc
       }
       case Op.choose: {
         const condition = new Condition(new Scalar(trace, first));
-        give(second, share(scalar, condition, chosen), true);
-        give(third, share(scalar, condition.not(), chosen), true);
+        const zero = trace.constant(0, scalar.dimension);
+        const [yes, no] = [condition.choose(scalar, zero), condition.choose(zero, scalar)];
+        give(second, chosen ? share(scalar, condition, yes) : yes, true);
+        give(third, chosen ? share(scalar, condition.not(), no) : no, true);
         break;
       }
       case Op.damp: {
@@ -94,14 +96,9 @@ interface Weight {
   readonly chosen: boolean;
 }
 
-/**
- * The weight of a branch of a choice: all where the branch is chosen, else 0.
- *
- * @param within a choice, which if it is itself not chosen may have a condition that waits: the weight 0 wins.
- */
-function share(weight: Scalar, condition: Condition, within: boolean): Scalar {
-  const all = condition.choose(weight, weight.trace.constant(0, weight.dimension));
-  return within ? whereZero(weight, weight.trace.apply(Op.damp, weight, condition.scalar), all) : all;
+/** The weight of a branch of a choice which, if it was itself not chosen, may have a condition that waits. */
+function share(weight: Scalar, condition: Condition, otherwise: Scalar): Scalar {
+  return whereZero(weight, weight.trace.apply(Op.damp, weight, condition.scalar), otherwise);
 }
 
 /**

@@ -156,6 +156,64 @@ describe('the editor', () => {
   );
 
   it(
+    'copies nodes with their links as text, also into another window, and takes them off again',
+    inWindow(
+      async (page) => {
+        const slips = page.locator('sk-slip');
+        const before = await slips.count();
+        await page.getByRole('button', { name: 'Find', exact: true }).click();
+        await page.getByRole('combobox', { name: 'Find' }).fill('left rafter');
+        await page.keyboard.press('Enter');
+        await page.keyboard.press('Control+c');
+        await page.keyboard.press('Control+v');
+        expect(await slips.count()).toBe(before + 1);
+        const copy = page.locator('sk-slip[selected]');
+        expect(await copy.locator('header input').inputValue()).toBe('Left rafter');
+        expect(await copy.getByRole('button', { name: 'Left knee' }).count()).toBe(1);
+        await page.keyboard.press('Delete');
+        expect(await slips.count()).toBe(before);
+        const other = await editor.openIn(page.context());
+        await other.getByRole('button', { name: 'New', exact: true }).click();
+        await other.getByLabel('Board', { exact: true }).focus();
+        await other.keyboard.press('Control+v');
+        expect(await other.locator('sk-slip header input').inputValue()).toBe('Left rafter');
+        await other.close();
+      },
+      { permissions: ['clipboard-read', 'clipboard-write'] },
+    ),
+  );
+
+  it(
+    'selects by a rubber band and along links, puts nodes into their bands, and takes that back',
+    inWindow(async (page) => {
+      const board = await page.locator('sk-board').boundingBox();
+      if (board === null) throw new Error('no board');
+      await page.keyboard.down('Shift');
+      await page.mouse.move(board.x + 230, board.y + 60);
+      await page.mouse.down();
+      await page.mouse.move(board.x + 360, board.y + 250);
+      await page.mouse.up();
+      await page.keyboard.up('Shift');
+      const selected = page.locator('sk-slip[selected]');
+      const some = await selected.count();
+      expect(some).toBeGreaterThan(2);
+      await page.getByRole('button', { name: 'Downstream' }).click();
+      expect(await selected.count()).toBeGreaterThan(some);
+      await page.keyboard.press('Escape');
+      const place = () => page.locator('sk-slip').nth(20).boundingBox();
+      const before = await place();
+      await page.getByRole('button', { name: 'Tidy' }).click();
+      await page.waitForTimeout(200);
+      expect(await place()).not.toEqual(before);
+      await page.getByRole('button', { name: 'Undo' }).click();
+      await page.getByRole('button', { name: 'Show all' }).last().click();
+      await page.waitForTimeout(200);
+      const after = await place();
+      expect(Math.abs((after?.x ?? 0) - (before?.x ?? 0))).toBeLessThan(2);
+    }),
+  );
+
+  it(
     'saves what the command line reads to the same figures',
     inWindow(async (page) => {
       await page.getByLabel('Span, exact', { exact: true }).fill('80 ft');

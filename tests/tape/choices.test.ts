@@ -143,6 +143,19 @@ describe('a choice', () => {
     expect(failedGuards(tape, registers).map((query) => queryText(query))).toEqual(['x is 1.000\u00a0m']);
   });
 
+  it('within a choice has its second derivative also where the slope is 0 by chance', () => {
+    const trace = new Trace();
+    const x = trace.input('x', NONE);
+    const value = x.above(-9).choose(x.least(5).cosine(), x);
+    const slopes = [...derivative([value], x), ...gradient(value, [x])];
+    const tape = finish(trace, [
+      ...slopes,
+      ...slopes.flatMap((slope) => [...derivative([slope], x), ...gradient(slope, [x])]),
+    ]);
+    const found = [...evaluate(tape, [0])];
+    expect(found.map((slope) => slope + 0)).toEqual([0, 0, -1, -1, -1, -1]);
+  });
+
   it('of inputs that no branch reads has no slope', () => {
     const trace = new Trace();
     const [x, y] = [trace.input('x', NONE), trace.input('y', NONE)];
