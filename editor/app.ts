@@ -20,7 +20,7 @@ import { controls } from './look/controls.ts';
 import './rail/rail.ts';
 import { Store } from './store/store.ts';
 
-type Part = 'elevation' | 'hall' | 'board' | 'rail';
+type Part = 'elevation' | 'hall' | 'board';
 
 /** The window: elevation and hall above, the board beneath, the rail along the foot. */
 export class App extends LitElement {
@@ -91,10 +91,11 @@ export class App extends LitElement {
         grid-template: auto 1fr / 1fr;
         grid-template-areas: 'bar' 'large';
       }
-      :host([large]) .part,
-      :host([large]) sk-rail {
+      :host([large]) .part {
         grid-area: large;
-        max-height: none;
+      }
+      [hidden] {
+        display: none;
       }
       .queries {
         position: absolute;
@@ -172,7 +173,6 @@ export class App extends LitElement {
     const { store } = this;
     const { document, session } = store;
     this.toggleAttribute('large', this.large !== undefined);
-    const shows = (part: Part): boolean => this.large === undefined || this.large === part;
     return html`
       <header>
         <input
@@ -215,10 +215,10 @@ export class App extends LitElement {
           ${session.queries.length === 0 ? 'No queries' : html`<span class="count">☁ ${session.queries.length} ${session.queries.length === 1 ? 'query' : 'queries'}</span>`}
         </button>
       </header>
-      ${shows('elevation') ? this.panel('elevation', html`<sk-elevation .store=${store}></sk-elevation>`) : nothing}
-      ${shows('hall') ? this.panel('hall', html`<sk-hall .store=${store}></sk-hall>`) : nothing}
-      ${shows('board') ? this.panel('board', html`<sk-board .store=${store}></sk-board>`) : nothing}
-      ${shows('rail') ? html`<sk-rail .store=${store}></sk-rail>` : nothing}
+      ${this.panel('elevation', html`<sk-elevation .store=${store}></sk-elevation>`)}
+      ${this.panel('hall', html`<sk-hall .store=${store}></sk-hall>`)}
+      ${this.panel('board', html`<sk-board .store=${store}></sk-board>`)}
+      <sk-rail .store=${store} ?hidden=${this.large !== undefined}></sk-rail>
       ${this.queriesOpen ? this.queries() : nothing}
       ${
         this.message === ''
@@ -232,7 +232,8 @@ export class App extends LitElement {
 
   private panel(name: Part, content: TemplateResult): TemplateResult {
     const large = this.large === name;
-    return html`<section class="part ${name}" aria-label=${name}>
+    const hidden = this.large !== undefined && !large;
+    return html`<section class="part ${name}" aria-label=${name} ?hidden=${hidden}>
       ${content}
       <button
         class="enlarge"

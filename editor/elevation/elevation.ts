@@ -100,6 +100,10 @@ export class Elevation extends LitElement {
       text {
         fill: var(--ink);
         font-size: 12px;
+        /* A rim of paper keeps figures readable upon lines. */
+        paint-order: stroke;
+        stroke: var(--paper);
+        stroke-width: 4px;
       }
       .force-text,
       .dimension-text {

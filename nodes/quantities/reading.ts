@@ -15,7 +15,7 @@ export const reading = defineNode({
   },
   settings: {
     rule: choice(
-      'Limit',
+      'Kind of limit',
       { none: 'no limit', 'at most': 'at most', 'at least': 'at least', target: 'a target' },
       'none',
     ),

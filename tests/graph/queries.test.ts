@@ -119,7 +119,7 @@ describe('what is wrong with a graph', () => {
       'a setting that is none of its options',
       [{ id: 'r', type: 'quantities/reading', values: { value: '3 m' }, settings: { rule: 'sometimes' } }],
       [],
-      ['r: Setting "Limit" is "sometimes", but must be one of none, at most, at least, target'],
+      ['r: Setting "Kind of limit" is "sometimes", but must be one of none, at most, at least, target'],
     ],
     [
       'a limit of another dimension',
