@@ -23,6 +23,12 @@ type Asking =
   | { readonly for: 'find' }
   | undefined;
 
+/** The zoom below which a slip's rows can't be read. */
+const READABLE = 0.42;
+
+/** How far beside what is seen slips are kept up to date, in board units: a drag must not uncover blank paper. */
+const MARGIN = 200;
+
 /** Where nodes are laid out and linked. */
 export class Board extends LitElement {
   static override properties = { store: { attribute: false }, asking: { state: true } };
@@ -123,6 +129,7 @@ export class Board extends LitElement {
   private drawn: { from: SocketData; to: Place } | undefined;
   private svg: SVGSVGElement | undefined;
   private opened = -1;
+  private looking = false;
 
   constructor() {
     super();
@@ -157,7 +164,7 @@ export class Board extends LitElement {
     if (container === null) return;
     this.skeleton = new Skeleton(container, () => this.store, {
       mount: (id, element) => this.mount(id, element),
-      viewed: () => {},
+      viewed: () => this.look(),
       picked: (id) => {
         if (!this.store.selection.has(id)) this.store.select([id]);
       },
@@ -206,14 +213,47 @@ export class Board extends LitElement {
       if (this.slips.has(id)) await skeleton.move(id, { x, y });
       else await skeleton.add(id, { x, y });
     }
-    for (const [id, slip] of this.slips) {
-      slip.requestUpdate();
-      void this.joinPorts(id, slip);
-    }
+    this.cull(true);
     this.drawLines();
     if (this.opened !== store.opened) {
       this.opened = store.opened;
       await this.showAll();
+    }
+  }
+
+  /** After the view has moved: once for all that moves it within a frame. */
+  private look(): void {
+    if (this.looking) return;
+    this.looking = true;
+    requestAnimationFrame(() => {
+      this.looking = false;
+      this.cull(false);
+    });
+  }
+
+  /** Slips that are not seen are not kept up to date, and those that are far away show their titles alone. */
+  private cull(changed: boolean): void {
+    const { store, skeleton } = this;
+    const box = this.getBoundingClientRect();
+    const from = skeleton?.placeAt(box.left, box.top);
+    const to = skeleton?.placeAt(box.right, box.bottom);
+    if (skeleton === undefined || from === undefined || to === undefined) return;
+    const small = skeleton.zoom < READABLE;
+    for (const [id, slip] of this.slips) {
+      const [x, y] = placeOf(store, id);
+      const height = slipHeight(rowsOf(store, id).length);
+      const seen =
+        x < to.x + MARGIN &&
+        x + SLIP.width > from.x - MARGIN &&
+        y < to.y + MARGIN &&
+        y + height > from.y - MARGIN;
+      const appears = seen && slip.hidden;
+      slip.hidden = !seen;
+      if (!seen) continue;
+      const resized = slip.small !== small;
+      slip.small = small;
+      if (changed || appears) slip.requestUpdate();
+      if (changed || appears || resized) void this.joinPorts(id, slip);
     }
   }
 
@@ -560,7 +600,10 @@ export class Board extends LitElement {
       const [x, y] = placeOf(store, id);
       return [x, y, x + SLIP.width, y + slipHeight(rowsOf(store, id).length)] as const;
     });
-    if (boxes.length === 0) return;
+    if (boxes.length === 0) {
+      await skeleton?.show(0, 0, SLIP.width, SLIP.row);
+      return;
+    }
     const edge = (k: 0 | 1 | 2 | 3, pick: (...all: number[]) => number) =>
       pick(...boxes.map((box) => box[k]));
     await skeleton?.show(edge(0, Math.min), edge(1, Math.min), edge(2, Math.max), edge(3, Math.max));

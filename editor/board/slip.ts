@@ -3,15 +3,20 @@ import { nodeName, nodesById, type SettingSpec } from '../../src/graph/index.ts'
 import { controls } from '../look/controls.ts';
 import { shownOutput } from '../store/figures.ts';
 import type { Store } from '../store/store.ts';
-import { type Row, rowsOf } from './rows.ts';
+import { type Row, rowsOf, slipHeight } from './rows.ts';
 
 /** A node on the board: a slip of paper with its title and a line for each input, setting and output. */
 export class Slip extends LitElement {
-  static override properties = { store: { attribute: false }, node: {}, version: { attribute: false } };
+  static override properties = {
+    store: { attribute: false },
+    node: {},
+    small: { type: Boolean, reflect: true },
+  };
 
   declare store: Store;
   declare node: string;
-  declare version: number;
+  /** Whether the slip is seen from so far that its title alone can be read. */
+  declare small: boolean;
 
   static override styles = [
     controls,
@@ -25,6 +30,16 @@ export class Slip extends LitElement {
         cursor: grab;
         user-select: none;
         padding-bottom: 4px;
+      }
+      :host([hidden]) {
+        display: none;
+      }
+      :host([small]) {
+        overflow: hidden;
+        padding: 8px;
+        font-size: 34px;
+        line-height: 1.05;
+        font-weight: 600;
       }
       :host([selected]) {
         outline: 2px solid var(--moved);
@@ -156,6 +171,7 @@ export class Slip extends LitElement {
     this.toggleAttribute('offers', this.offers !== undefined);
     const type = session.library.find(record.type);
     const name = nodeName(record, session.library);
+    if (this.small) return html`${name}`;
     const onRail = store.document.rail.includes(node);
     return html`
       <header title=${type?.help ?? ''}>
@@ -179,6 +195,11 @@ export class Slip extends LitElement {
       </header>
       ${rowsOf(store, node).map((row) => this.row(row))}
     `;
+  }
+
+  override updated(): void {
+    // The links are drawn by the model's measures, whether the rows are there or not.
+    this.style.height = this.small ? `${slipHeight(rowsOf(this.store, this.node).length)}px` : '';
   }
 
   private row(row: Row): TemplateResult {

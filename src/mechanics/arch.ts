@@ -1,5 +1,6 @@
 import {
   arcSegment,
+  COINCIDENT,
   cross,
   distance,
   type Point,
@@ -91,7 +92,17 @@ export function span(arch: Arch): Scalar {
 /** By how much the crown hinge lies off the line of the springings: 0 is a mechanism. Positive above the line. */
 export function hingeRise(arch: Arch): Scalar {
   const base = subtract(arch.right, arch.left);
-  return cross(base, subtract(arch.crown, arch.left)).over(distance(arch.left, arch.right));
+  return cross(base, subtract(arch.crown, arch.left)).over(springingDistance(arch));
+}
+
+/** The distance of the springings, guarded: where they are at one place there is no line for a crown to be off. */
+function springingDistance({ left, right }: Arch): Scalar {
+  const apart = distance(left, right);
+  return guard(
+    apart,
+    apart.above(apart.trace.constant(COINCIDENT, LENGTH)),
+    say('springings-coincide')`The two springings are at one place (${apart} apart): move one of them`,
+  );
 }
 
 /**
@@ -101,7 +112,7 @@ export function whereStiff(arch: Arch, value: Scalar): Scalar {
   const off = hingeRise(arch).absolute();
   return guard(
     value,
-    off.above(distance(arch.left, arch.right).times(HINGES_IN_LINE)),
+    off.above(springingDistance(arch).times(HINGES_IN_LINE)),
     say(
       'hinges-in-line',
     )`The three hinges lie on one line (the crown is ${off} off it): the arch has no stiffness against loads across it. Raise or lower the crown`,

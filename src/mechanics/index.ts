@@ -23,7 +23,7 @@ export {
   placeOnSegment,
 } from './place.ts';
 export { forcesAlong, shapePlaces, stationsAlong, towardsIntrados } from './stations.ts';
-export { AT_HINGE, DEAD_POINT, HINGES_IN_LINE, OFF_AXIS, UNMOVED } from './tolerance.ts';
+export { AT_HINGE, DEAD_POINT, HINGES_IN_LINE, OFF_AXIS, SAME_PLACE, UNMOVED } from './tolerance.ts';
 export {
   negligibleDisplacement,
   type PerturbedState,

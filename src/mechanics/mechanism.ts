@@ -10,10 +10,12 @@ import {
   moved,
   type Point,
   subtract,
+  TOUCHING,
   turnAbout,
   turnOf,
 } from '../geometry/index.ts';
-import { guard, type Scalar, say } from '../tape/index.ts';
+import { LENGTH } from '../quantity/index.ts';
+import { asAngle, guard, type Scalar, say } from '../tape/index.ts';
 import { type Arch, axisLength, crownStart, whereStiff } from './arch.ts';
 import { isBefore, isLeft, type Place } from './place.ts';
 import { AT_HINGE, DEAD_POINT } from './tolerance.ts';
@@ -46,7 +48,7 @@ export interface Mechanism {
  * It is driven from the left springing unless that is near a dead point (the far circles nearly touch), and
  * then from the right one; only where all hinges lie on one line are both ends at a dead point.
  *
- * A query where the cut is at a hinge, or the arch without stiffness.
+ * Queries: a cut at a hinge; an arch without stiffness; a perturbation that the mechanism can't follow.
  */
 export function releaseMoment(arch: Arch, cut: Place, perturbation: Scalar): Mechanism {
   const inLeft = isLeft(arch, cut);
@@ -68,7 +70,7 @@ export function releaseMoment(arch: Arch, cut: Place, perturbation: Scalar): Mec
     { centre: nearMoved, radius: distance(near, far) },
     { centre: end, radius: distance(far, end) },
   ];
-  const farMoved = circlesMeet(...circles, { nearest: far });
+  const farMoved = circlesMeet(withinReach(circles, perturbation), circles[1], { nearest: far });
   const middle = motionBetween({ from: near, to: far }, { from: nearMoved, to: farMoved });
   const follower = motionBetween({ from: end, to: far }, { from: end, to: farMoved });
 
@@ -95,7 +97,7 @@ export function releaseMoment(arch: Arch, cut: Place, perturbation: Scalar): Mec
 /** The cut's point, with a query where it is at a hinge, which carries no moment. */
 function checkCut(arch: Arch, cut: Place): Point {
   const total = axisLength(arch);
-  const least = total.times(AT_HINGE);
+  const least = total.trace.constant(AT_HINGE, LENGTH);
   const off = cut.along.least(total.minus(cut.along)).least(cut.along.minus(crownStart(arch)).absolute());
   const query = say(
     'cut-at-hinge',
@@ -104,6 +106,22 @@ function checkCut(arch: Arch, cut: Place): Point {
     x: guard(cut.point.x, off.above(least), query),
     y: guard(cut.point.y, off.above(least), query),
   };
+}
+
+/**
+ * The circle about the driven hinge, guarded: where the circles miss each other, nobody has drawn them, and what can
+ * be changed is how far the mechanism is turned.
+ */
+function withinReach([first, second]: Mechanism['circles'], perturbation: Scalar): Circle {
+  const [r, s] = [first.radius, second.radius];
+  const apart = distance(first.centre, second.centre);
+  const gap = apart.minus(r.plus(s)).most(r.minus(s).absolute().minus(apart));
+  const reached = gap.atMost(r.plus(s).times(TOUCHING));
+  const query = say(
+    'turned-too-far',
+  )`The released mechanism can't follow a perturbation of ${asAngle(perturbation)}: its circles miss each other by ${gap}. Take a smaller one`;
+  const { x, y } = first.centre;
+  return { centre: { x: guard(x, reached, query), y: guard(y, reached, query) }, radius: r };
 }
 
 /** The sine of the angle at the middle one of three points. */

@@ -2,6 +2,7 @@ import { chooseVector, type Point, subtract, type Vector } from '../geometry/ind
 import { LENGTH, NONE } from '../quantity/index.ts';
 import { Condition, guard, Refusal, type Scalar, say } from '../tape/index.ts';
 import { type Arch, axisLength, crownStart } from './arch.ts';
+import { SAME_PLACE } from './tolerance.ts';
 
 /** A place on the axis of an arch. */
 export interface Place {
@@ -102,12 +103,15 @@ export function placeNearest(arch: Arch, point: Point): { readonly place: Place;
   return { place, off };
 }
 
-/** Whether one place comes before another, walking from the left springing. Known while tracing if segments tell. */
+/**
+ * Whether one place comes before another, walking from the left springing; one place by rounding alone does not.
+ * Known while tracing if segments tell.
+ */
 export function isBefore(a: Place, b: Place): Condition {
   if (a.segment !== undefined && b.segment !== undefined && a.segment !== b.segment) {
     return new Condition(a.along.trace.constant(a.segment < b.segment ? 1 : 0, NONE));
   }
-  return a.along.below(b.along);
+  return a.along.below(b.along.times(1 - SAME_PLACE));
 }
 
 /** Whether a place belongs to the left half. The crown hinge itself counts as its end. */
@@ -115,5 +119,5 @@ export function isLeft(arch: Arch, place: Place): Condition {
   if (place.segment !== undefined) {
     return new Condition(place.along.trace.constant(place.segment < arch.leftSegments ? 1 : 0, NONE));
   }
-  return place.along.atMost(crownStart(arch));
+  return place.along.atMost(crownStart(arch).times(1 + SAME_PLACE));
 }

@@ -13,8 +13,8 @@ import {
   Trace,
 } from '../../src/tape/index.ts';
 
-// Real figures only: the root of a negative figure is none.
-const math = create(all as FactoryFunctionMap, { predictable: true });
+// Real figures only: the root of a negative figure is none. Comparisons to the last digit.
+const math = create(all as FactoryFunctionMap, { predictable: true, relTol: 1e-300, absTol: 0 });
 
 const NAMES = ['a', 'b', 'c'] as const;
 type Figures = Readonly<Record<(typeof NAMES)[number], number>>;
@@ -53,15 +53,23 @@ interface Part {
 
 class OutsideDomain extends Error {}
 
+/** What was met on the way to a value. */
+interface Way {
+  /** The greatest figure, in size. */
+  greatest: number;
+  /** How near a figure came to where a function or comparison jumps or ends: rounding may tip it over. */
+  nearest: number;
+}
+
 /**
  * The value of a part by the other's functions, one by one, so that it is seen where one is asked for what it can't
- * give. `sizes` collects the figures on the way.
+ * give.
  */
-function partValue(part: Part, figures: Figures, sizes: number[]): number {
-  const of = (inner: Part | undefined): number => partValue(inner as Part, figures, sizes);
+function partValue(part: Part, figures: Figures, way: Way): number {
+  const of = (inner: Part | undefined): number => partValue(inner as Part, figures, way);
   const note = (value: number | boolean): number => {
     const figure = Number(value);
-    sizes.push(Math.abs(figure));
+    way.greatest = Math.max(way.greatest, Math.abs(figure));
     return figure;
   };
   switch (part.type) {
@@ -76,6 +84,7 @@ function partValue(part: Part, figures: Figures, sizes: number[]): number {
     default: {
       const name = typeof part.fn === 'string' ? part.fn : (part.fn?.name ?? '');
       const operands = (part.args ?? []).map(of);
+      way.nearest = Math.min(way.nearest, edge(name, operands));
       if (!defined(name, operands)) throw new OutsideDomain(name);
       const call = (math as unknown as Record<string, (...operands: number[]) => number | boolean>)[name];
       if (call === undefined) throw new Error(`no function ${name}`);
@@ -100,21 +109,34 @@ function defined(name: string, [x = 0, y = 0, ...others]: readonly number[]): bo
   return true;
 }
 
-function otherValue(text: string, figures: Figures): { value: number; greatest: number } | undefined {
-  const sizes: number[] = [];
+/** How far operands are from where a function jumps or its domain ends. */
+function edge(name: string, [x = 0, y = 0]: readonly number[]): number {
+  if (['smaller', 'smallerEq', 'larger', 'largerEq'].includes(name)) return Math.abs(x - y);
+  if (['sqrt', 'log', 'and', 'or', 'not'].includes(name)) return Math.min(Math.abs(x), Math.abs(y));
+  if (name === 'divide') return Math.abs(y);
+  if (name === 'tan') return Math.abs(Math.cos(x));
+  if (name === 'asin' || name === 'acos') return Math.abs(Math.abs(x) - 1);
+  // Its operands are up and across: it jumps where there is nothing up, on the left.
+  if (name === 'atan2') return y > 0 ? y : Math.abs(x);
+  return name === 'pow' ? Math.abs(x) : Number.POSITIVE_INFINITY;
+}
+
+/** The other's value, undefined where it has none, and the way to it. */
+function otherValue(text: string, figures: Figures): Way & { value: number | undefined } {
+  const way = { greatest: 0, nearest: Number.POSITIVE_INFINITY };
   try {
-    partValue(math.parse(text) as unknown as Part, figures, sizes);
+    partValue(math.parse(text) as unknown as Part, figures, way);
   } catch (error) {
-    if (error instanceof OutsideDomain) return undefined;
+    if (error instanceof OutsideDomain) return { ...way, value: undefined };
     throw error;
   }
   const value = Number(math.evaluate(text, { ...figures }));
-  return Number.isFinite(value) ? { value, greatest: Math.max(...sizes) } : undefined;
+  return { ...way, value: Number.isFinite(value) ? value : undefined };
 }
 
 /**
  * Whether a formula holds a part that its value can't depend on, which this program therefore leaves out, bad or not:
- * a product with a constant 0, a power of 0, a choice between equals.
+ * a product with a constant 0, a power of 0, a choice between equals, what a constant yes or no has settled.
  */
 function leavesOut(text: string): boolean {
   let found = false;
@@ -123,8 +145,11 @@ function leavesOut(text: string): boolean {
     const name = typeof fn === 'string' ? fn : fn?.name;
     const constant = args.map((part) => constantValue(part));
     if (name === 'multiply' || name === 'divide' || name === 'pow') found ||= constant.includes(0);
+    if (name === 'and' || name === 'or') found ||= constant.some((value) => value !== undefined);
     const choices = [...(name === 'min' || name === 'max' ? args : []), trueExpr, falseExpr];
-    const texts = choices.flatMap((part) => (part === undefined ? [] : [String(part)]));
+    const texts = choices.flatMap((part) =>
+      part === undefined ? [] : [String(constantValue(part) ?? part)],
+    );
     found ||= new Set(texts).size < texts.length;
   });
   return found;
@@ -175,7 +200,7 @@ const { formula } = fc.letrec<{ formula: string; part: string }>((tie) => {
       fc.tuple(part, fc.integer({ min: -3, max: 4 })).map(([x, n]) => `(${x})^${n}`),
       fc.tuple(fc.constantFrom(...NAMES, '2'), fc.integer({ min: 2, max: 3 })).map(([x, n]) => `${x}^${n}`),
       fc.tuple(part, fc.constantFrom('0.5', '1.5', '-0.25')).map(([x, n]) => `(${x})^${n}`),
-      fc.tuple(part, part).map(([x, y]) => `(abs(${x}) + 0.1)^(${y})`),
+      fc.tuple(part, part).map(([x, y]) => `(abs(${x}) + 0.1)^(3 * sin(${y}))`),
       call(1, 1, 'abs', 'sqrt', 'sin', 'cos', 'tan', 'asin', 'acos', 'atan', 'exp', 'log'),
       call(2, 2, 'atan2'),
       call(1, 4, 'min', 'max', 'hypot'),
@@ -192,25 +217,29 @@ const figures: fc.Arbitrary<Figures> = fc.record({ a: eighths, b: eighths, c: ei
 
 describe('any formula', () => {
   it('of plain numbers has the value that mathjs gives it, or neither has one', () => {
-    const seen = { values: 0, refused: 0 };
+    const seen = { values: 0, refused: 0, onEdge: 0 };
     fc.assert(
       fc.property(readable, figures, (text, given) => {
         const mine = traced(text, []).value(NAMES.map((name) => given[name]));
-        const other = otherValue(text, given);
-        if (other === undefined) {
-          seen.refused += 1;
-          if (mine !== undefined) expect(leavesOut(text), `${text} is ${mine}`).toBe(true);
+        const { value, greatest, nearest } = otherValue(text, given);
+        // Each operation rounds by 1e-16 of its own figure, and the next may be steep.
+        const rounding = 1e-9 * Math.max(1, greatest);
+        const agrees =
+          value === undefined
+            ? mine === undefined || leavesOut(text)
+            : Math.abs((mine ?? Number.NaN) - value) <= rounding;
+        if (!agrees && nearest <= rounding) {
+          seen.onEdge += 1;
           return;
         }
-        seen.values += 1;
-        // Each operation rounds by 1e-16 of its own figure, and the next may be steep: 1e-9 of the largest on the way.
-        const gap = Math.abs((mine ?? Number.NaN) - other.value);
-        expect(gap <= 1e-9 * Math.max(1, other.greatest), `${text}: ${mine}, not ${other.value}`).toBe(true);
+        seen[value === undefined ? 'refused' : 'values'] += 1;
+        expect(agrees, `${text}: ${mine}, not ${value}`).toBe(true);
       }),
       { numRuns: 4000 },
     );
     expect(seen.values).toBeGreaterThan(2000);
     expect(seen.refused).toBeGreaterThan(200);
+    expect(seen.onEdge).toBeLessThan(100);
   });
 
   it('of quantities scales by its dimension in other units, or is refused while tracing', () => {
@@ -269,6 +298,6 @@ describe('any formula', () => {
       }),
       { numRuns: 5000 },
     );
-    expect(read).toBeGreaterThan(50);
+    expect(read).toBeGreaterThan(20);
   });
 });

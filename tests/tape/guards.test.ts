@@ -14,6 +14,7 @@ import {
   run,
   type Scalar,
   say,
+  substitute,
   Trace,
 } from '../../src/tape/index.ts';
 
@@ -88,9 +89,10 @@ describe('a guard', () => {
     const { trace, x } = lengths();
     const write = (factor: number) => guard(x.times(factor), x.above(0), say('low')`x is ${x}`);
     expect(write(2).index).toBe(write(2).index);
-    expect(runOn(trace, [write(2), write(2), write(3)], [-1, 0])).toMatchObject({
-      values: [WAITS, WAITS, WAITS],
-      texts: ['x is −1.000\u00a0m'],
+    const all = [write(2), write(2), write(3), guard(x, x.above(0), say('other')`something else`)];
+    expect(runOn(trace, all, [-1, 0])).toMatchObject({
+      values: [WAITS, WAITS, WAITS, WAITS],
+      texts: ['x is −1.000\u00a0m', 'something else'],
     });
   });
 
@@ -188,14 +190,29 @@ describe('a guard in a derivative', () => {
   it('taken elsewhere fails by the figures of that place, and says them', () => {
     const { trace, x, y } = lengths();
     const p = trace.mark(x);
-    trace.owner = 'node 1';
     const held = guard(p.squared(), p.above(y), say('low')`p is ${p}, below ${y}`);
-    trace.owner = undefined;
     const [slope] = derivative([held], p, 1) as [Scalar];
     expect(runOn(trace, [slope], [10, 0.5])).toMatchObject({ values: [2], texts: [] });
-    const found = runOn(trace, [slope], [10, 4]);
-    expect(found).toMatchObject({ values: [WAITS], texts: ['p is 1.000\u00a0m, below 4.000\u00a0m'] });
-    expect(found.queries[0]?.owner, 'whoever wrote the guard').toBe('node 1');
+    expect(runOn(trace, [slope], [10, 4])).toMatchObject({
+      values: [WAITS],
+      texts: ['p is 1.000\u00a0m, below 4.000\u00a0m'],
+    });
+  });
+
+  it('or in a value taken elsewhere speaks for the node that wrote it', () => {
+    const { trace, x, y } = lengths();
+    trace.owner = 'node 1';
+    const held = guard(x.squared(), x.above(y), say('low')`x is ${x}`);
+    trace.owner = 'node 2';
+    const [slope, value] = [...derivative([held], x, 1), ...substitute([held], x, 2)] as [Scalar, Scalar];
+    for (const [output, words] of [
+      [slope, 'x is 1.000\u00a0m'] as const,
+      [value, 'x is 2.000\u00a0m'] as const,
+    ]) {
+      const found = runOn(trace, [output], [10, 4]);
+      expect(found.texts).toEqual([words]);
+      expect(found.queries.map(({ owner }) => owner)).toEqual(['node 1']);
+    }
   });
 
   it('says the figures of that place beside a value that holds where it is', () => {

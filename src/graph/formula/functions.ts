@@ -43,7 +43,7 @@ export const functions: ReadonlyMap<string, FormulaFunction> = new Map([
   ['acos', one((a) => arctangent(across(a), a))],
   ['atan', one((a) => arctangent(a, a.trace.constant(1, NONE)))],
   ['atan2', two(direction)],
-  ['hypot', several(hypotenuse)],
+  ['hypot', { least: 1, most: 20, write: length }],
   ['min', several((a, b) => a.least(b))],
   ['max', several((a, b) => a.most(b))],
   ['exp', one((a) => a.exponential())],
@@ -82,6 +82,12 @@ function condition(value: Scalar): Condition {
     );
   }
   return value.atLeast(0).and(value.atMost(0)).not();
+}
+
+/** √(a² + b² + …); of one figure alone its size. */
+function length([first, ...others]: readonly Scalar[]): Scalar {
+  const a = first as Scalar;
+  return others.length === 0 ? a.absolute() : others.reduce(hypotenuse, a);
 }
 
 function quotient(a: Scalar, b: Scalar): Scalar {
