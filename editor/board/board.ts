@@ -1,21 +1,23 @@
-import { css, html, LitElement, nothing, render, svg, type TemplateResult } from 'lit';
+import { html, LitElement, nothing, render, svg, type TemplateResult } from 'lit';
 import type { SocketData } from 'rete-connection-plugin';
-import { type LinkEnd, nodeName, nodesById, tidyPlaces } from '../../src/graph/index.ts';
+import { type LinkEnd, nodesById } from '../../src/graph/index.ts';
 import { queryText } from '../../src/tape/index.ts';
 import { controls } from '../look/controls.ts';
 import type { Store } from '../store/store.ts';
 import { Watch } from '../store/watch.ts';
+import { align, moveTo, nudge, spread, tidy } from './arrange.ts';
 import { RubberBand } from './band.ts';
+import { chooseLink, linkChoices, nodeChoices, stockChoices } from './choices.ts';
 import './chooser.ts';
-import type { Choice } from './chooser.ts';
 import { cloudAbout, linesOf } from './cloud.ts';
-import { fits, outputsFor } from './fits.ts';
+import { fits } from './fits.ts';
 import { drawLinks, leader } from './links.ts';
 import { copySelection, paste } from './part.ts';
 import { placeOf, portPlace, rowsOf, SLIP, slipHeight } from './rows.ts';
 import { type Place, Skeleton } from './skeleton.ts';
 import './slip.ts';
 import type { Slip } from './slip.ts';
+import { boardStyles } from './styles.ts';
 
 type Asking =
   | { readonly for: 'node'; readonly at: Place }
@@ -36,92 +38,7 @@ export class Board extends LitElement {
   declare store: Store;
   declare asking: Asking;
 
-  static override styles = [
-    controls,
-    css`
-      :host {
-        display: block;
-        position: relative;
-        overflow: hidden;
-        background: var(--ground);
-      }
-      .area {
-        position: absolute;
-        inset: 0;
-        touch-action: none;
-      }
-      .empty {
-        position: absolute;
-        inset: 0;
-        display: grid;
-        place-content: center;
-        text-align: center;
-        color: var(--ink-soft);
-        pointer-events: none;
-      }
-      .tools {
-        position: absolute;
-        left: 8px;
-        top: 8px;
-        display: flex;
-        flex-wrap: wrap;
-        gap: 4px;
-      }
-      .rubber {
-        position: absolute;
-        border: 1px dashed var(--moved);
-        pointer-events: none;
-      }
-      .band-head {
-        fill: var(--ink-soft);
-        font-size: 22px;
-      }
-      svg.links {
-        position: absolute;
-        overflow: visible;
-        width: 1px;
-        height: 1px;
-        pointer-events: none;
-      }
-      .link {
-        fill: none;
-        stroke: var(--ink-soft);
-        stroke-width: 1;
-      }
-      .link.geometry {
-        stroke-dasharray: 14 3 2 3;
-      }
-      .link.structure {
-        stroke-width: 2.5;
-      }
-      .link.virtual {
-        stroke-dasharray: 7 4;
-      }
-      .link.results {
-        stroke-width: 4;
-      }
-      .link.inner {
-        stroke: var(--ground);
-        stroke-width: 2;
-      }
-      .link.near {
-        stroke: var(--ink);
-      }
-      .link.drawing {
-        stroke: var(--moved);
-        stroke-width: 2;
-      }
-      .cloud {
-        fill: none;
-        stroke: var(--over);
-        stroke-width: 2;
-      }
-      .cloud-text {
-        fill: var(--over);
-        font-size: 12px;
-      }
-    `,
-  ];
+  static override styles = [controls, boardStyles];
 
   private skeleton: Skeleton | undefined;
   private readonly slips = new Map<string, Slip>();
@@ -148,7 +65,7 @@ export class Board extends LitElement {
       ${empty ? html`<p class="empty">The board is empty. Double-click it, or press N, to take a node from the stock.</p>` : nothing}
       <div class="tools">
         <button @click=${() => this.askForNode()} title="Take a node from the stock (N)">Add node</button>
-        <button @click=${() => this.tidy()} title="Put every node into its band (T)">Tidy</button>
+        <button @click=${() => this.tidyAll()} title="Put every node into its band (T)">Tidy</button>
         <button @click=${() => (this.asking = { for: 'find' })} title="Find a node (Ctrl F)">Find</button>
         ${this.selectionTools()}
         <button @click=${() => this.showAll()} title="Show the whole board (F)">Show all</button>
@@ -298,7 +215,7 @@ export class Board extends LitElement {
     if (!this.drag.has(id)) return;
     const places = new Map([...this.drag].map(([moved, { x, y }]) => [moved, [x, y] as const]));
     this.drag.clear();
-    this.place(places);
+    moveTo(this.store, places);
   }
 
   /** Shows which ports would take the link that is being drawn. */
@@ -366,17 +283,17 @@ export class Board extends LitElement {
     const { selection } = this.store;
     if (selection.size === 0) return nothing;
     return html`
-      <button @click=${() => this.spread('sources')} title="Select what these read from, however far back (U)">
+      <button @click=${() => spread(this.store, 'sources')} title="Select what these read from, however far back (U)">
         Upstream
       </button>
-      <button @click=${() => this.spread('readers')} title="Select what reads from these, however far on (D)">
+      <button @click=${() => spread(this.store, 'readers')} title="Select what reads from these, however far on (D)">
         Downstream
       </button>
       <button @click=${() => this.duplicate()} title="A copy of these beside them (Ctrl D)">Duplicate</button>
       ${
         selection.size < 2
           ? nothing
-          : html`<button @click=${() => this.align()} title="Put these beneath each other">Align</button>`
+          : html`<button @click=${() => align(this.store)} title="Put these beneath each other">Align</button>`
       }
       <button @click=${() => this.store.removeSelected()} title="Take these off the board (Delete)">Remove</button>
     `;
@@ -423,64 +340,6 @@ export class Board extends LitElement {
     if (text !== undefined) paste(this.store, text);
   }
 
-  /** Selects, with the selection, all that it depends on, or all that depends on it. */
-  private spread(along: 'sources' | 'readers'): void {
-    const { document, selection } = this.store;
-    const [near, far] = along === 'sources' ? (['to', 'from'] as const) : (['from', 'to'] as const);
-    const found = new Set(selection);
-    const open = [...selection];
-    for (let id = open.pop(); id !== undefined; id = open.pop()) {
-      for (const link of document.links) {
-        const next = link[far][0];
-        if (link[near][0] !== id || found.has(next)) continue;
-        found.add(next);
-        open.push(next);
-      }
-    }
-    this.store.select(found);
-  }
-
-  private tidy(): void {
-    const { store } = this;
-    const places = tidyPlaces(store.document, store.session.library, {
-      width: SLIP.width,
-      gap: 24,
-      height: (id) => slipHeight(rowsOf(store, id).length),
-    });
-    this.place(places);
-    void this.updateComplete.then(() => this.showAll());
-  }
-
-  /** Puts the selection beneath each other, as its leftmost stands. */
-  private align(): void {
-    const { store } = this;
-    const ids = [...store.selection].toSorted((a, b) => placeOf(store, a)[1] - placeOf(store, b)[1]);
-    const x = Math.min(...ids.map((id) => placeOf(store, id)[0]));
-    let y = placeOf(store, ids[0] ?? '')[1];
-    const places = new Map<string, readonly [number, number]>();
-    for (const id of ids) {
-      places.set(id, [x, y]);
-      y += slipHeight(rowsOf(store, id).length) + 24;
-    }
-    this.place(places);
-  }
-
-  private place(places: ReadonlyMap<string, readonly [number, number]>, gesture?: string): void {
-    const known = nodesById(this.store.document);
-    const edits = [...places].flatMap(([id, [x, y]]) => {
-      const node = known.get(id);
-      return node === undefined
-        ? []
-        : [
-            {
-              edit: 'change-node' as const,
-              node: { ...node, place: [Math.round(x), Math.round(y)] as const },
-            },
-          ];
-    });
-    this.store.edit({ edit: 'several', edits }, gesture);
-  }
-
   private chooser(asking: Exclude<Asking, undefined>): TemplateResult {
     const closed = () => {
       this.asking = undefined;
@@ -489,7 +348,7 @@ export class Board extends LitElement {
     if (asking.for === 'node') {
       return html`<sk-chooser
         heading="Take a node from the stock"
-        .choices=${this.stock()}
+        .choices=${stockChoices(this.store)}
         @chosen=${(event: CustomEvent<string>) => {
           const { x, y } = asking.at;
           const id = this.store.addNode(event.detail, [x, y]);
@@ -499,73 +358,30 @@ export class Board extends LitElement {
       ></sk-chooser>`;
     }
     if (asking.for === 'find') {
-      const { document, session } = this.store;
       return html`<sk-chooser
         heading="Find a node"
         empty="The board is empty."
-        .choices=${document.nodes.map((record) => ({
-          id: record.id,
-          title: nodeName(record, session.library),
-          group: session.library.find(record.type)?.title ?? record.type,
-          help: record.remark ?? '',
-        }))}
+        .choices=${nodeChoices(this.store)}
         @chosen=${(event: CustomEvent<string>) => void this.reveal(event.detail)}
         @closed=${closed}
       ></sk-chooser>`;
     }
     return html`<sk-chooser
-      heading=${this.linkHeading(asking.to)}
+      heading="Link to ${this.inputTitle(asking.to)}"
       empty="No node gives what this input takes: add one from the stock."
-      .choices=${this.linkChoices(asking.to)}
-      @chosen=${(event: CustomEvent<string>) => this.chosenLink(asking.to, event.detail)}
+      .choices=${linkChoices(this.store, asking.to)}
+      @chosen=${(event: CustomEvent<string>) => chooseLink(this.store, asking.to, event.detail)}
       @closed=${closed}
     ></sk-chooser>`;
   }
 
-  private stock(): Choice[] {
-    const { packs } = this.store.session.library;
-    return packs.flatMap((pack) =>
-      pack.nodes.map(({ type, title, help }) => ({ id: type, title, group: pack.name, help })),
-    );
+  private inputTitle([id, input]: LinkEnd): string {
+    return this.store.session.live.traced.nodes.get(id)?.inputs[input]?.title ?? input;
   }
 
-  private linkHeading([id, input]: LinkEnd): string {
-    const node = this.store.session.live.traced.nodes.get(id);
-    return `Link to ${node?.inputs[input]?.title ?? input}`;
-  }
-
-  /** What can be linked to an input, and the links that it has, to be taken off. */
-  private linkChoices(to: LinkEnd): Choice[] {
-    const { store } = this;
-    const { library } = store.session;
-    const known = nodesById(store.document);
-    const title = ([id, port]: LinkEnd): string => {
-      const record = known.get(id);
-      const output = record === undefined ? undefined : library.find(record.type)?.outputs[port];
-      const name = record === undefined ? id : nodeName(record, library);
-      return output === undefined || output.title === name ? name : `${name}: ${output.title}`;
-    };
-    const links = store.linksInto(...to);
-    const has = links.map(({ from }) => JSON.stringify(from));
-    return [
-      ...links.map(({ from }, i) => ({
-        id: JSON.stringify({ off: i }),
-        title: `Take off ${title(from)}`,
-        group: 'Linked now',
-        help: links.length > 1 ? `Link ${i + 1} of ${links.length}` : '',
-      })),
-      ...outputsFor(store, to)
-        .filter((from) => !has.includes(JSON.stringify(from)))
-        .map((from) => ({ id: JSON.stringify(from), title: title(from), group: 'Link', help: '' })),
-    ];
-  }
-
-  private chosenLink(to: LinkEnd, chosen: string): void {
-    const choice = JSON.parse(chosen) as LinkEnd | { readonly off: number };
-    if ('off' in choice) {
-      const link = this.store.linksInto(...to)[choice.off];
-      if (link !== undefined) this.store.removeLink(link);
-    } else this.store.addLink({ from: choice, to });
+  private tidyAll(): void {
+    tidy(this.store);
+    void this.updateComplete.then(() => this.showAll());
   }
 
   private askForNode(at?: Place): void {
@@ -637,16 +453,16 @@ export class Board extends LitElement {
     const arrow = arrows[event.key];
     if (arrow !== undefined) {
       event.preventDefault();
-      if (store.selection.size > 0) this.nudge(arrow);
+      if (store.selection.size > 0) nudge(store, arrow);
       else void skeleton?.pan(-arrow[0] * 4, -arrow[1] * 4);
       return;
     }
     const actions: Record<string, () => void> = {
       n: () => this.askForNode(),
       f: () => void this.showAll(),
-      t: () => this.tidy(),
-      u: () => this.spread('sources'),
-      d: () => this.spread('readers'),
+      t: () => this.tidyAll(),
+      u: () => spread(this.store, 'sources'),
+      d: () => spread(this.store, 'readers'),
       '+': () => void skeleton?.zoomBy(1.25),
       '-': () => void skeleton?.zoomBy(0.8),
       Delete: () => store.removeSelected(),
@@ -660,14 +476,6 @@ export class Board extends LitElement {
     if (action === undefined) return;
     event.preventDefault();
     action();
-  }
-
-  private nudge([dx, dy]: readonly [number, number]): void {
-    const places = [...this.store.selection].map((id) => {
-      const [x, y] = placeOf(this.store, id);
-      return [id, [x + dx, y + dy] as const] as const;
-    });
-    this.place(new Map(places), 'nudge');
   }
 }
 

@@ -2,7 +2,7 @@ import { Flow, type SocketData } from 'rete-connection-plugin';
 import type { Link, LinkEnd } from '../../src/graph/index.ts';
 import type { Store } from '../store/store.ts';
 import { fits } from './fits.ts';
-import type { Schemes } from './skeleton.ts';
+import type { Schemes } from './schemes.ts';
 
 /**
  * What dragging from a port does: a link is drawn from it and is made where it ends at a port that fits. Dragging

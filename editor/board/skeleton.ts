@@ -1,14 +1,9 @@
-import { ClassicPreset, type GetSchemes, NodeEditor } from 'rete';
+import { ClassicPreset, NodeEditor } from 'rete';
 import { AreaPlugin, type RenderSignal } from 'rete-area-plugin';
 import { ConnectionPlugin, type SocketData } from 'rete-connection-plugin';
 import type { Store } from '../store/store.ts';
 import { LinkDrag } from './linking.ts';
-
-/** The skeleton's notion of nodes and links. Ours are the document's; it holds ids and places only. */
-export type Schemes = GetSchemes<
-  ClassicPreset.Node,
-  ClassicPreset.Connection<ClassicPreset.Node, ClassicPreset.Node> & { readonly isPseudo?: boolean }
->;
+import type { Schemes } from './schemes.ts';
 
 type Port = { readonly nodeId: string; readonly side: 'input' | 'output'; readonly key: string };
 type Ports = RenderSignal<'socket', Port>;

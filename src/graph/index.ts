@@ -45,9 +45,10 @@ export {
 export * as kinds from './kinds.ts';
 export { LIMITS } from './limits.ts';
 export { LiveGraph, type NodeState } from './live.ts';
+export type { Figures, Mark, XY } from './mark.ts';
 export { orderNodes } from './order.ts';
 export { type Reading, readings, type Slider, sliders } from './rail.ts';
-export { type Figures, type Mark, type SceneItem, sceneOf, type XY } from './scene.ts';
+export { type SceneItem, sceneOf } from './scene.ts';
 export { documentSchema } from './schema.ts';
 export { Session } from './session.ts';
 export { choice, flag, optionalQuantity, type SettingForm, type SettingSpec, text } from './setting.ts';

@@ -1,6 +1,6 @@
 import { type Measure, NONE, nameDimension } from '../quantity/index.ts';
 import { Refusal, type Scalar, Trace } from '../tape/index.ts';
-import type { Figures, Mark } from './scene.ts';
+import type { Figures, Mark } from './mark.ts';
 
 /** What a link of a kind is drawn as: each is a line type of the drawing. */
 export type LineType = 'numbers' | 'geometry' | 'structure' | 'virtual' | 'results';
