@@ -12,13 +12,21 @@ const interned = new Map<string, Dimension>();
 
 /** The dimension length^`length` · mass^`mass` · time^`time`; exponents may be fractions (of a square root). */
 export function dimension(length: number, mass: number, time: number): Dimension {
-  const key = `${length},${mass},${time}`;
+  const exponents = [length, mass, time].map(withoutRounding) as [number, number, number];
+  const key = exponents.join();
   let known = interned.get(key);
   if (known === undefined) {
-    known = Object.freeze({ length, mass, time });
+    const [l, m, t] = exponents;
+    known = Object.freeze({ length: l, mass: m, time: t });
     interned.set(key, known);
   }
   return known;
+}
+
+/** An exponent to nine decimals: sums of fractions (0.1 + 0.2) must meet the fraction that they stand for (0.3). */
+function withoutRounding(exponent: number): number {
+  // Adding 0 turns −0 into 0.
+  return Number.isInteger(exponent) ? exponent + 0 : Math.round(exponent * 1e9) / 1e9;
 }
 
 /** The dimension of a product. */
@@ -36,8 +44,7 @@ export function quotientDimension(a: Dimension, b: Dimension): Dimension {
 
 /** The dimension of a power with the plain-number exponent `exponent`. */
 export function powerDimension(a: Dimension, exponent: number): Dimension {
-  // Adding 0 turns the −0 of (0 · negative) into 0, which would otherwise print as another key.
-  return dimension(a.length * exponent + 0, a.mass * exponent + 0, a.time * exponent + 0);
+  return dimension(a.length * exponent, a.mass * exponent, a.time * exponent);
 }
 
 export const NONE: Dimension = dimension(0, 0, 0);
@@ -89,7 +96,6 @@ export function baseUnits(d: Dimension): string {
 
 const RAISED: Record<string, string> = {
   '-': '⁻',
-  '.': '·',
   0: '⁰',
   1: '¹',
   2: '²',

@@ -274,6 +274,21 @@ describe('the editor', () => {
   });
 
   it(
+    'works without a network once it was open, the hall and the ready graphs too',
+    inWindow(async (page) => {
+      await page.evaluate(async () => {
+        await navigator.serviceWorker.ready;
+      });
+      await page.context().setOffline(true);
+      await page.reload();
+      await page.getByRole('img', { name: 'Hall of 8 bays' }).waitFor();
+      await page.getByLabel('Ready graphs').selectOption('stand-roof');
+      await page.getByRole('img', { name: 'Hall of 9 bays' }).waitFor();
+      expect(await readingOn(page, 'lower-knee-moment')).toBe('−280.8 kN·m');
+    }),
+  );
+
+  it(
     'prints figures in US customary units throughout, and in SI again',
     inWindow(async (page) => {
       await page.getByLabel('Units').selectOption('US');

@@ -19,6 +19,8 @@ export class Editor {
 
   static async start(): Promise<Editor> {
     const outDir = mkdtempSync(join(tmpdir(), 'skewback-editor-'));
+    // The test runner's own environment would make a build of another kind than the one that users get.
+    process.env.NODE_ENV = 'production';
     await build({ configFile: CONFIG, logLevel: 'error', build: { outDir, emptyOutDir: true } });
     const server = await preview({
       configFile: CONFIG,

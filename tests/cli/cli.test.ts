@@ -153,7 +153,7 @@ describe('skewback check', () => {
   it('says that nothing is wrong', () => {
     const { status, printed } = call('check', BARN);
     expect(status).toBe(0);
-    expect(printed).toMatch(/^43 nodes, 71 links, \d+ operations: no query\n$/);
+    expect(printed).toMatch(/^45 nodes, 83 links, \d+ operations: no query\n$/);
   });
 
   it('lists the queries, with the name of the node', () => {

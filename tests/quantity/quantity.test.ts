@@ -129,6 +129,8 @@ describe('a dimension', () => {
   it('is one object, whichever way it is made', () => {
     expect(dimension(1, 0, 0)).toBe(LENGTH);
     expect(quotientDimension(dimension(2, 0, 0), LENGTH)).toBe(LENGTH);
+    expect(dimension(0.1 + 0.2, 0, 0)).toBe(dimension(0.3, 0, 0));
+    expect(dimension(-0, 0, 0)).toBe(dimension(0, 0, 0));
   });
 
   it('has a name, or its base units', () => {
