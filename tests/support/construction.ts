@@ -11,10 +11,11 @@ import {
   Trace,
 } from '../../src/tape/index.ts';
 
-/** What a person would see of a construction: its figures, and the texts of its queries. */
+/** What a person would see of a construction: its figures, the texts of its queries, and the figures in those. */
 export interface Outcome {
   readonly values: readonly number[];
   readonly queries: readonly string[];
+  readonly figures: readonly number[];
 }
 
 export type Construction = (...values: readonly number[]) => Outcome;
@@ -35,9 +36,11 @@ export function prepared(trace: Trace, scalars: readonly Scalar[]): Construction
   const registers = registersFor(tape);
   return (...values) => {
     run(tape, values, registers);
+    const failed = failedGuards(tape, registers);
     return {
       values: Array.from(tape.outputs, (register) => registers[register] as number),
-      queries: failedGuards(tape, registers).map((query) => queryText(query)),
+      queries: failed.map((query) => queryText(query)),
+      figures: failed.flatMap(({ figures }) => figures.map(({ value }) => value)),
     };
   };
 }

@@ -1,8 +1,9 @@
-import { Matrix, solve } from 'ml-matrix';
+import { CholeskyDecomposition, Matrix } from 'ml-matrix';
 
 /**
- * A plane frame solved by the direct stiffness method: straight bars with axial and bending stiffness, three
- * freedoms at a node. It shares no code and no method with the program, and so is a check on it. SI units.
+ * A plane frame solved by the direct stiffness method: straight bars with axial and bending stiffness
+ * (Euler–Bernoulli), three freedoms at a node. It shares no code and no method with the program, and so is a
+ * check on it. SI units.
  */
 
 export interface XY {
@@ -18,171 +19,329 @@ export interface FrameArch {
   readonly crown: number;
 }
 
-/** A force that is carried at a place of a segment, by a rigid arm where it acts elsewhere. */
-export interface FrameLoad {
+/** A place on the axis: a segment, counted from 0, and how far along it, from 0 to 1. */
+export interface FrameCut {
   readonly segment: number;
   readonly ratio: number;
+}
+
+/** A force that is carried at a place of a segment, by a rigid arm where it acts elsewhere. */
+export interface FrameLoad extends FrameCut {
   readonly at: XY;
   readonly force: XY;
 }
 
-export interface FrameCut {
-  readonly segment: number;
-  readonly ratio: number;
+/** Internal forces: tension, rate of change of the moment along the axis, moment with the intrados in tension. */
+export interface FrameForces {
+  readonly N: number;
+  readonly V: number;
+  readonly M: number;
 }
 
 export interface FrameResult {
   /** Of the ground on the arch. */
   readonly left: XY;
   readonly right: XY;
-  /** Just before each cut: tension, rate of change of M, moment with the intrados in tension. */
-  readonly cuts: readonly { readonly N: number; readonly V: number; readonly M: number }[];
-}
-
-interface Bar {
-  readonly from: number;
-  readonly to: number;
-  /** Freedoms: two displacements and a rotation at either end. */
-  readonly freedoms: readonly number[];
+  /** Just before each cut: a load at the very place of the cut counts as after it. */
+  readonly cuts: readonly FrameForces[];
+  /** Of each point of the axis, in metres where the stiffness was given. */
+  readonly displacements: readonly XY[];
 }
 
 /**
- * Solves the frame. The forces of a statically determinate frame do not depend on its stiffness, which is chosen
- * so that the equations are well conditioned.
+ * Places nearer than this share of the arch's size are joined at one node by rigid arms. Stiffness grows with the
+ * cube of the nearness: beyond it the digits of the longer bars would be lost in the sums at the node.
+ */
+const NEAR = 1e-4;
+
+/** A node of the frame. Its rotation before it and after it is one freedom, but for the hinges. */
+interface Node {
+  readonly at: XY;
+  readonly x: number;
+  readonly y: number;
+  readonly rotationBefore: number;
+  readonly rotationAfter: number;
+}
+
+/** A bar between two nodes, with the forces in it: they grow with each step of the solution. */
+interface Bar {
+  readonly from: Node;
+  readonly to: Node;
+  readonly along: XY;
+  readonly length: number;
+  readonly freedoms: readonly number[];
+  tension: number;
+  shear: number;
+  momentBefore: number;
+}
+
+/** A node of one segment, with the segment's bars that end and begin at it. */
+interface Stop {
+  readonly ratio: number;
+  readonly node: Node;
+  ends?: Bar;
+  begins?: Bar;
+}
+
+/**
+ * Solves the frame.
+ *
+ * The forces in a statically determinate frame do not depend on its stiffness, which unless given (EA in N, EI in
+ * N m²) is chosen so that the equations are well conditioned; displacements then have no scale.
+ *
+ * Throws where the hinges lie on one line, or so near it that the forces are not found to 11 digits.
  */
 export function solveFrame(
   arch: FrameArch,
   loads: readonly FrameLoad[],
   cuts: readonly FrameCut[],
+  stiffness: { readonly EA?: number; readonly EI?: number } = {},
 ): FrameResult {
-  const span = Math.hypot(
-    (arch.points.at(-1) as XY).x - (arch.points[0] as XY).x,
-    (arch.points.at(-1) as XY).y - (arch.points[0] as XY).y,
-  );
-  const [EA, EI] = [1, (span / 10) ** 2];
+  const { points, crown } = arch;
+  const last = points.length - 1;
+  if (!(crown > 0 && crown < last)) throw new Error('the crown hinge must lie between the springings');
+  for (const { segment, ratio } of [...loads, ...cuts]) {
+    if (!(segment in points && segment < last && ratio >= 0 && ratio <= 1)) {
+      throw new Error(`there is no place ${segment}, ${ratio} on the axis`);
+    }
+  }
+  // Lengths in sizes of the arch, forces in sizes of the load, EI = 1: the equations are free of units.
+  const origin = points[0] as XY;
+  const size = Math.max(...points.map((point) => Math.hypot(point.x - origin.x, point.y - origin.y)));
+  const unit = Math.max(0, ...loads.map(({ force }) => Math.hypot(force.x, force.y))) || 1;
+  const EA = stiffness.EA ?? (stiffness.EI === undefined ? 1 : stiffness.EI * (10 / size) ** 2);
+  const EI = stiffness.EI ?? EA * (size / 10) ** 2;
+  const axial = (EA * size ** 2) / EI;
+  const scaled = ({ x, y }: XY): XY => ({ x: (x - origin.x) / size, y: (y - origin.y) / size });
 
-  const nodes: XY[] = [arch.points[0] as XY];
+  let freedoms = 0;
+  const nodeAt = (at: XY, hinge: boolean): Node => {
+    const [x, y, rotationBefore] = [freedoms, freedoms + 1, freedoms + 2];
+    freedoms += hinge ? 4 : 3;
+    return { at, x, y, rotationBefore, rotationAfter: freedoms - 1 };
+  };
+  const corners = points.map((point, i) => nodeAt(scaled(point), i === crown));
   const bars: Bar[] = [];
-  const nodeAt = new Map<string, number>();
-  // Rotation freedoms follow the displacements; the crown has one for either side.
-  const rotation: number[] = [0];
-  let rotations = 1;
-  const cutBar = new Map<string, number>();
-  for (let segment = 0; segment + 1 < arch.points.length; segment++) {
-    const [from, to] = [arch.points[segment] as XY, arch.points[segment + 1] as XY];
+  const stops = Array.from({ length: last }, (_, segment) => {
+    const [from, to] = [corners[segment] as Node, corners[segment + 1] as Node];
+    const run = { x: to.at.x - from.at.x, y: to.at.y - from.at.y };
+    const length = Math.hypot(run.x, run.y);
+    const along = { x: run.x / length, y: run.y / length };
+    const found: Stop[] = [{ ratio: 0, node: from }];
     const ratios = [...loads, ...cuts].filter((one) => one.segment === segment).map(({ ratio }) => ratio);
-    const stops = [...new Set([0, ...ratios, 1])].sort((a, b) => a - b);
-    let before = nodes.length - 1;
-    nodeAt.set(`${segment} 0`, before);
-    let beforeRotation = rotation[before] as number;
-    if (segment === arch.crown) beforeRotation = rotations++;
-    for (const ratio of stops.slice(1)) {
-      nodes.push({ x: from.x + (to.x - from.x) * ratio, y: from.y + (to.y - from.y) * ratio });
-      const here = nodes.length - 1;
-      rotation[here] = rotations++;
-      nodeAt.set(`${segment} ${ratio}`, here);
-      cutBar.set(`${segment} ${ratio}`, bars.length);
-      const hereRotation = rotation[here] as number;
-      bars.push({
-        from: before,
-        to: here,
-        freedoms: [2 * before, 2 * before + 1, beforeRotation, 2 * here, 2 * here + 1, hereRotation].map(
-          (freedom, k) => (k % 3 === 2 ? -1 - freedom : freedom),
-        ),
-      });
-      before = here;
-      beforeRotation = hereRotation;
+    for (const ratio of ratios.sort((a, b) => a - b)) {
+      const near = NEAR / length;
+      if (ratio - (found.at(-1) as Stop).ratio < near || 1 - ratio < near) continue;
+      const at = { x: from.at.x + run.x * ratio, y: from.at.y + run.y * ratio };
+      found.push({ ratio, node: nodeAt(at, false) });
     }
-  }
-  const displacements = 2 * nodes.length;
-  const index = (freedom: number): number => (freedom < 0 ? displacements - 1 - freedom : freedom);
-  const size = displacements + rotations;
-  const stiffness = Matrix.zeros(size, size);
-  const forces = Matrix.zeros(size, 1);
-  for (const bar of bars) {
-    const k = globalStiffness(nodes, bar, EA, EI);
-    for (let i = 0; i < 6; i++) {
-      for (let j = 0; j < 6; j++) {
-        const [row, column] = [index(bar.freedoms[i] as number), index(bar.freedoms[j] as number)];
-        stiffness.set(row, column, stiffness.get(row, column) + k.get(i, j));
-      }
+    found.push({ ratio: 1, node: to });
+    for (const [i, stop] of found.slice(1).entries()) {
+      const before = found[i] as Stop;
+      const bar: Bar = {
+        from: before.node,
+        to: stop.node,
+        along,
+        length: (stop.ratio - before.ratio) * length,
+        freedoms: [
+          ...[before.node.x, before.node.y, before.node.rotationAfter],
+          ...[stop.node.x, stop.node.y, stop.node.rotationBefore],
+        ],
+        tension: 0,
+        shear: 0,
+        momentBefore: 0,
+      };
+      before.begins = bar;
+      stop.ends = bar;
+      bars.push(bar);
     }
-  }
-  for (const { segment, ratio, at, force } of loads) {
-    const node = nodeAt.get(`${segment} ${ratio}`) as number;
-    const place = nodes[node] as XY;
-    add(forces, 2 * node, force.x);
-    add(forces, 2 * node + 1, force.y);
-    const arm = (at.x - place.x) * force.y - (at.y - place.y) * force.x;
-    // A load at the very beginning of a segment turns that segment, not the one before.
-    const bar = ratio === 0 ? firstBar(bars, node) : undefined;
-    const turned = bar === undefined ? -1 - (rotation[node] as number) : (bar.freedoms[2] as number);
-    add(forces, index(turned), arm);
-  }
-  const last = nodes.length - 1;
-  const held = new Set([0, 1, 2 * last, 2 * last + 1]);
-  const free = Array.from({ length: size }, (_, i) => i).filter((i) => !held.has(i));
-  const reduced = stiffness.selection(free, free);
-  const right = forces.selection(free, [0]);
-  let found = solve(reduced, right);
-  // One step of refinement takes out the rounding of the elimination.
-  found = Matrix.add(found, solve(reduced, Matrix.sub(right, reduced.mmul(found))));
-  const moved = Matrix.zeros(size, 1);
-  for (const [i, freedom] of free.entries()) moved.set(freedom, 0, found.get(i, 0));
-  const total = Matrix.sub(stiffness.mmul(moved), forces);
+    return found;
+  });
+  /** The stop that a place of a segment is joined to. */
+  const stopOf = ({ segment, ratio }: FrameCut): Stop => {
+    const found = stops[segment] as Stop[];
+    const distance = (stop: Stop): number => Math.abs(stop.ratio - ratio);
+    return found.reduce((best, stop) => (distance(stop) < distance(best) ? stop : best));
+  };
 
+  const placed = loads.map(({ segment, ratio, at, force }) => {
+    const place = { segment, ratio, stop: stopOf({ segment, ratio }) };
+    return { ...place, at: scaled(at), force: { x: force.x / unit, y: force.y / unit } };
+  });
+  const applied = new Float64Array(freedoms);
+  for (const { stop, at, force } of placed) {
+    const { node } = stop;
+    increase(applied, node.x, force.x);
+    increase(applied, node.y, force.y);
+    // At the crown a load turns the side that it is tied to.
+    const turned = stop.begins === undefined ? node.rotationBefore : node.rotationAfter;
+    increase(applied, turned, momentAbout(node.at, at, force));
+  }
+
+  const [left, right] = [corners[0] as Node, corners[last] as Node];
+  const held = new Set([left.x, left.y, right.x, right.y]);
+  const free = Array.from({ length: freedoms }, (_, i) => i).filter((i) => !held.has(i));
+  const solve = solver(assemble(bars, freedoms, axial).selection(free, free));
+  const moved = new Float64Array(freedoms);
+  let rest = applied;
+  let error = Number.POSITIVE_INFINITY;
+  // Each step puts what the bars do not yet carry on the frame. The forces are added up rather than found from the
+  // displacements, whose differences over a short bar have lost digits that the forces of a small step still have.
+  for (let step = 0; step < 12; step++) {
+    const more = solve(free.map((freedom) => rest[freedom] as number));
+    const change = new Float64Array(freedoms);
+    for (const [i, freedom] of free.entries()) change[freedom] = more[i] as number;
+    for (const [i, value] of change.entries()) increase(moved, i, value);
+    for (const bar of bars) deform(bar, change, axial);
+    rest = applied.map((force) => force);
+    for (const bar of bars) {
+      for (const [i, force] of endForces(bar).entries()) increase(rest, bar.freedoms[i] as number, -force);
+    }
+    const now = Math.max(...free.map((freedom) => Math.abs(rest[freedom] as number)));
+    if (!(now < error / 2)) break;
+    error = now;
+  }
+  const largest = Math.max(...bars.flatMap((bar) => endForces(bar).map(Math.abs)));
+  if (!(error <= 1e-11 * largest || largest === 0)) throw new Error('the frame is too near a mechanism');
+
+  const ground = (node: Node): XY => ({
+    x: -(rest[node.x] as number) * unit,
+    y: -(rest[node.y] as number) * unit,
+  });
   return {
-    left: { x: total.get(0, 0), y: total.get(1, 0) },
-    right: { x: total.get(2 * last, 0), y: total.get(2 * last + 1, 0) },
-    cuts: cuts.map(({ segment, ratio }) => {
-      const bar = bars[cutBar.get(`${segment} ${ratio}`) as number] as Bar;
-      const ends = globalStiffness(nodes, bar, EA, EI).mmul(
-        Matrix.columnVector(bar.freedoms.map((freedom) => moved.get(index(freedom), 0))),
-      );
-      const [a, b] = [nodes[bar.from] as XY, nodes[bar.to] as XY];
-      const length = Math.hypot(b.x - a.x, b.y - a.y);
-      const [c, s] = [(b.x - a.x) / length, (b.y - a.y) / length];
-      // What the node presses on the bar's end: along it, it pulls; anticlockwise, it puts the lower face,
-      // the intrados, in tension; across it, it pushes up against the shear that would raise the moment.
-      const [fx, fy, m] = [ends.get(3, 0), ends.get(4, 0), ends.get(5, 0)];
-      return { N: fx * c + fy * s, V: -(-fx * s + fy * c), M: m };
+    left: ground(left),
+    right: ground(right),
+    cuts: cuts.map((cut) => {
+      const stop = stopOf(cut);
+      const [from, to] = [corners[cut.segment] as Node, corners[cut.segment + 1] as Node];
+      const at = {
+        x: from.at.x + (to.at.x - from.at.x) * cut.ratio,
+        y: from.at.y + (to.at.y - from.at.y) * cut.ratio,
+      };
+      // What the part before the cut presses on the part after it, about the cut: the end of the bar, and the
+      // loads of the same node that lie between the bar's end and the cut.
+      const first = stop.ends === undefined;
+      const bar = (stop.ends ?? stop.begins) as Bar;
+      const [x, y, turn] = (first ? endForces(bar).slice(0, 3) : endForces(bar).slice(3).map(opposite)) as [
+        number,
+        number,
+        number,
+      ];
+      const total = { x, y, moment: turn + momentAbout(at, stop.node.at, { x, y }) };
+      for (const load of placed) {
+        if (load.stop !== stop || load.ratio < cut.ratio === first) continue;
+        const sign = first ? -1 : 1;
+        total.x += sign * load.force.x;
+        total.y += sign * load.force.y;
+        total.moment += sign * momentAbout(at, load.at, load.force);
+      }
+      const { along } = bar;
+      return {
+        N: -(total.x * along.x + total.y * along.y) * unit,
+        V: (total.y * along.x - total.x * along.y) * unit,
+        M: -total.moment * unit * size,
+      };
+    }),
+    displacements: corners.map((node) => {
+      const scale = (unit * size ** 3) / EI;
+      return { x: (moved[node.x] as number) * scale, y: (moved[node.y] as number) * scale };
     }),
   };
 }
 
-function firstBar(bars: readonly Bar[], node: number): Bar | undefined {
-  return bars.find(({ from }) => from === node);
+/** The moment about a point of a force that acts at another, anticlockwise. */
+function momentAbout(about: XY, at: XY, force: XY): number {
+  return (at.x - about.x) * force.y - (at.y - about.y) * force.x;
 }
 
-function add(vector: Matrix, row: number, value: number): void {
-  vector.set(row, 0, vector.get(row, 0) + value);
+function opposite(value: number): number {
+  return -value;
+}
+
+function increase(values: Float64Array, i: number, by: number): void {
+  values[i] = (values[i] as number) + by;
 }
 
 /**
- * Stiffness of a bar in global directions: EA/l along it, 12EI/l³, 6EI/l², 4EI/l and 2EI/l across it (any book on
- * matrix structural analysis; from memory).
+ * How the end displacements and rotations of a bar lengthen it and turn its ends away from its chord: the rows of
+ * stretch, turn before and turn after.
  */
-function globalStiffness(nodes: readonly XY[], bar: Bar, EA: number, EI: number): Matrix {
-  const [a, b] = [nodes[bar.from] as XY, nodes[bar.to] as XY];
-  const length = Math.hypot(b.x - a.x, b.y - a.y);
-  const [c, s] = [(b.x - a.x) / length, (b.y - a.y) / length];
-  const k = EA / length;
-  const [p, q, r] = [(12 * EI) / length ** 3, (6 * EI) / length ** 2, (2 * EI) / length];
-  const local = new Matrix([
-    [k, 0, 0, -k, 0, 0],
-    [0, p, q, 0, -p, q],
-    [0, q, 2 * r, 0, -q, r],
-    [-k, 0, 0, k, 0, 0],
-    [0, -p, -q, 0, p, -q],
-    [0, q, r, 0, -q, 2 * r],
-  ]);
-  const turn = new Matrix([
-    [c, s, 0, 0, 0, 0],
-    [-s, c, 0, 0, 0, 0],
-    [0, 0, 1, 0, 0, 0],
-    [0, 0, 0, c, s, 0],
-    [0, 0, 0, -s, c, 0],
-    [0, 0, 0, 0, 0, 1],
-  ]);
-  return turn.transpose().mmul(local).mmul(turn);
+function deformations({ along: { x, y }, length }: Bar): readonly (readonly number[])[] {
+  const [turnX, turnY] = [y / length, x / length];
+  return [
+    [-x, -y, 0, x, y, 0],
+    [-turnX, turnY, 1, turnX, -turnY, 0],
+    [-turnX, turnY, 0, turnX, -turnY, 1],
+  ];
+}
+
+/**
+ * The stiffness of the frame, of EI = 1: EA/l against stretch, 4EI/l and 2EI/l against the turns of the ends (any
+ * book on matrix structural analysis; from memory).
+ */
+function assemble(bars: readonly Bar[], freedoms: number, axial: number): Matrix {
+  const total = Matrix.zeros(freedoms, freedoms);
+  for (const bar of bars) {
+    const rows = new Matrix(deformations(bar).map((row) => [...row]));
+    const basic = new Matrix([
+      [axial, 0, 0],
+      [0, 4, 2],
+      [0, 2, 4],
+    ]).div(bar.length);
+    const ends = rows.transpose().mmul(basic).mmul(rows);
+    for (const [i, row] of bar.freedoms.entries()) {
+      for (const [j, column] of bar.freedoms.entries()) {
+        total.set(row, column, total.get(row, column) + ends.get(i, j));
+      }
+    }
+  }
+  return total;
+}
+
+/** Solves for a right side, the equations first scaled to a diagonal of ones. */
+function solver(stiffness: Matrix): (right: readonly number[]) => number[] {
+  const scale = stiffness.diagonal().map((value) => 1 / Math.sqrt(value));
+  const balanced = Matrix.zeros(scale.length, scale.length);
+  for (const [i, a] of scale.entries()) {
+    // The two halves are rounded differently, and the decomposition asks for the same.
+    for (const [j, b] of scale.slice(0, i + 1).entries()) {
+      const value = stiffness.get(i, j) * a * b;
+      balanced.set(i, j, value);
+      balanced.set(j, i, value);
+    }
+  }
+  const decomposition = new CholeskyDecomposition(balanced);
+  if (!decomposition.isPositiveDefinite()) throw new Error('the frame is a mechanism');
+  return (right) => {
+    const column = Matrix.columnVector(right.map((value, i) => value * (scale[i] as number)));
+    return decomposition
+      .solve(column)
+      .getColumn(0)
+      .map((value, i) => value * (scale[i] as number));
+  };
+}
+
+/** Adds to the forces in a bar what a small movement of its ends makes. */
+function deform(bar: Bar, change: Float64Array, axial: number): void {
+  const { from, to, along, length } = bar;
+  const [byX, byY] = [
+    (change[to.x] as number) - (change[from.x] as number),
+    (change[to.y] as number) - (change[from.y] as number),
+  ];
+  const chord = (byY * along.x - byX * along.y) / length;
+  const before = (change[from.rotationAfter] as number) - chord;
+  const after = (change[to.rotationBefore] as number) - chord;
+  bar.tension += (axial * (byX * along.x + byY * along.y)) / length;
+  bar.shear += (6 * (before + after)) / length ** 2;
+  bar.momentBefore -= (4 * before + 2 * after) / length;
+}
+
+/**
+ * Forces and moments of the nodes on a bar, first where it begins and then where it ends. A moment that puts the
+ * intrados (below, where the bar runs to the right) in tension turns its beginning clockwise, its end anticlockwise.
+ */
+function endForces({ along, length, tension, shear, momentBefore }: Bar): number[] {
+  const x = -tension * along.x - shear * along.y;
+  const y = -tension * along.y + shear * along.x;
+  return [x, y, -momentBefore, -x, -y, momentBefore + shear * length];
 }

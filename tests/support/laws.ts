@@ -1,16 +1,19 @@
+import { builtIn } from '../../nodes/index.ts';
 import type { InputSpec, Kind, Literal, NodeType } from '../../src/graph/index.ts';
-import { scalarsIn } from '../../src/graph/index.ts';
+import { scalarsIn, traceGraph } from '../../src/graph/index.ts';
 import { type Dimension, readQuantity } from '../../src/quantity/index.ts';
 import {
   evaluate,
   finish,
   gradient,
+  queryText,
   registersFor,
   run,
   type Scalar,
   type Tape,
   Trace,
 } from '../../src/tape/index.ts';
+import { graphOf } from './graphs.ts';
 
 /** A node's example on a trace, its figures being the tape's inputs. */
 export interface TracedExample {
@@ -44,6 +47,21 @@ export function traceExample(node: NodeType): TracedExample {
   );
   const outputs = node.trace(given, chosen, { trace, more: given });
   return { trace, figures, values, outputs };
+}
+
+/** A node's example among the nodes around it, all typed figures being the tape's inputs. */
+export function traceSurroundings(node: NodeType): TracedExample {
+  const { nodes = [], links = [] } = node.example.around ?? {};
+  const document = { ...graphOf([...nodes, { id: 'this', type: node.type }]), links };
+  const { trace, figures, nodes: traced, queries } = traceGraph(document, builtIn);
+  const outputs = traced.get('this')?.outputs;
+  if (outputs === undefined) throw new Error(queries.map((query) => queryText(query)).join('; '));
+  return {
+    trace,
+    figures: figures.map(({ scalar }) => scalar),
+    values: figures.map(({ value }) => value),
+    outputs,
+  };
 }
 
 function inputValue(
@@ -86,10 +104,12 @@ export function statedFigures(node: NodeType, output: string): number[] {
 }
 
 /** How far the outputs are from scaling by their dimensions when length, mass and time are measured in other units. */
-export function unitGap({ trace, figures, values, outputs }: TracedExample): number {
+export function unitGap(
+  { trace, figures, values, outputs }: TracedExample,
+  [length, mass, time]: readonly [length: number, mass: number, time: number],
+): number {
   const scalars = scalarsIn(outputs);
   const tape = finish(trace, scalars);
-  const [length, mass, time] = [3.7, 0.21, 1.9];
   const scale = (d: Dimension): number => length ** d.length * mass ** d.mass * time ** d.time;
   const plain = evaluate(tape, values);
   const scaled = evaluate(
