@@ -8,10 +8,16 @@ export function check(args: readonly string[], out: Output): number {
   const { nodes, links } = session.document;
   const { queries } = session;
   for (const query of queries) out.print(`${queryLine(session, query, system)}\n`);
-  const found =
-    queries.length === 0 ? 'no query' : `${queries.length} ${queries.length === 1 ? 'query' : 'queries'}`;
-  out.print(
-    `${nodes.length} nodes, ${links.length} links, ${session.live.operations} operations: ${found}\n`,
-  );
+  const found = queries.length === 0 ? 'no query' : counted(queries.length, 'query', 'queries');
+  const size = [
+    counted(nodes.length, 'node'),
+    counted(links.length, 'link'),
+    counted(session.live.operations, 'operation'),
+  ];
+  out.print(`${size.join(', ')}: ${found}\n`);
   return queries.length === 0 ? 0 : 3;
+}
+
+function counted(count: number, one: string, more = `${one}s`): string {
+  return `${count} ${count === 1 ? one : more}`;
 }

@@ -3,7 +3,8 @@ import { type GraphDocument, type Link, type NodeRecord, nodesById, sameEnd } fr
 /** One change of a document. Every edit can be turned round: see `apply`. */
 export type Edit =
   | { readonly edit: 'add-node'; readonly node: NodeRecord; readonly at?: number }
-  | { readonly edit: 'remove-node'; readonly id: string }
+  /** `hanging`: leaves links and rail that name it, as a file may that lacks a node. */
+  | { readonly edit: 'remove-node'; readonly id: string; readonly hanging?: true }
   /** Puts another record in the place of the node with its id: a new name, place, remark … */
   | { readonly edit: 'change-node'; readonly node: NodeRecord }
   | {
@@ -48,7 +49,7 @@ export function apply(document: GraphDocument, edit: Edit): Applied {
     case 'add-node':
       return addNode(document, edit.node, edit.at ?? document.nodes.length);
     case 'remove-node':
-      return removeNode(document, edit.id);
+      return removeNode(document, edit.id, edit.hanging === true);
     case 'change-node':
       return changeNode(document, edit.node);
     case 'set-value': {
@@ -137,14 +138,14 @@ function addNode(document: GraphDocument, node: NodeRecord, at: number): Applied
   if (nodesById(document).has(node.id)) throw new EditError(`there is a node "${node.id}" already`);
   return {
     document: { ...document, nodes: document.nodes.toSpliced(at, 0, node) },
-    inverse: { edit: 'remove-node', id: node.id },
+    inverse: { edit: 'remove-node', id: node.id, hanging: true },
   };
 }
 
-function removeNode(document: GraphDocument, id: string): Applied {
+function removeNode(document: GraphDocument, id: string, hanging: boolean): Applied {
   const node = find(document, id);
   const linked = document.links.some(({ from, to }) => from[0] === id || to[0] === id);
-  if (linked || document.rail.includes(id)) {
+  if (!hanging && (linked || document.rail.includes(id))) {
     throw new EditError(`the node "${id}" has links or stands on the rail: take those off first`);
   }
   const at = document.nodes.indexOf(node);

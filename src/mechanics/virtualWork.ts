@@ -1,6 +1,16 @@
 import { dot, type Point, subtract, type Vector } from '../geometry/index.ts';
 import { LENGTH, MOMENT } from '../quantity/index.ts';
-import { derivative, guard, Refusal, type Scalar, say, substitute, sum, type Trace } from '../tape/index.ts';
+import {
+  asAngle,
+  derivative,
+  guard,
+  Refusal,
+  type Scalar,
+  say,
+  substitute,
+  sum,
+  type Trace,
+} from '../tape/index.ts';
 import { UNMOVED } from './tolerance.ts';
 
 /** What a released and perturbed mechanism is, so far as virtual work is concerned. */
@@ -73,10 +83,10 @@ export function virtualWorkMoment(state: PerturbedState): VirtualWorkMoment {
     .over(
       guard(
         closing,
-        closing.absolute().above(0),
+        closing.absolute().above(LEAST_CLOSING),
         say(
           'no-perturbation',
-        )`The perturbation is ${closing}: give it a size, for example 2°, to see a value at it`,
+        )`The perturbation is ${asAngle(perturbation)}: give it a size, for example 2°, to see a value at it`,
       ),
     );
   const along = loads.map(({ force }, i) => perUnitForce(works[i] as Scalar, force));
@@ -100,6 +110,12 @@ export function negligibleDisplacement(loads: readonly { readonly at: Point }[],
 
 /** Below this rate of change the angle is taken not to change at all; a mechanism's is of the order of 1. */
 const LEAST_RATE = 1e-9;
+
+/**
+ * Below this change of the angle, in radians, nothing is taken to have moved: an unperturbed mechanism closes by its
+ * rounding of some 1e-16, and work over that would be a figure of nothing.
+ */
+const LEAST_CLOSING = 1e-9;
 
 /** The moved point, with a query unless it is at the load while nothing is moved. */
 function checkUnmoved(state: PerturbedState, at: Point, after: Point, i: number): Point {

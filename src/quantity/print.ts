@@ -21,7 +21,13 @@ const NO_BREAK_SPACE = '\u00a0';
 export function printQuantity(value: number, measure: Measure, system: System, options: PrintOptions = {}) {
   const unit = measure.units[system];
   const decimals = options.fine ? Number.POSITIVE_INFINITY : measure.decimals;
-  return withUnit(printNumber(value / unit.factor, options.digits ?? 4, decimals), unit);
+  return withUnit(printNumber(inUnit(value, unit), options.digits ?? 4, decimals), unit);
+}
+
+/** The figure in a unit; one that would be beyond the machine's largest, as in degrees of 1e308 radians, is that. */
+function inUnit(value: number, unit: Unit): number {
+  const figure = value / unit.factor;
+  return Number.isFinite(value) && !Number.isFinite(figure) ? Math.sign(figure) * Number.MAX_VALUE : figure;
 }
 
 function withUnit(figure: string, unit: Unit): string {
@@ -50,8 +56,9 @@ function printNumber(value: number, digits: number, mostDecimals: number): strin
  * to fifteen significant figures, plain signs ("-12.5 kN").
  */
 export function writeQuantity(value: number, unit: Unit): string {
-  if (!Number.isFinite(value)) throw new RangeError(`${value} is no figure to write`);
-  const figure = String(Number((value / unit.factor).toPrecision(15)));
-  if (unit.symbol === '') return figure;
+  const figure = Number((value / unit.factor).toPrecision(15));
+  // Tested after rounding, which carries the largest figures of the machine over to infinity.
+  if (!Number.isFinite(figure)) throw new RangeError(`${value} is no figure to write`);
+  if (unit.symbol === '') return String(figure);
   return unit.symbol === '°' ? `${figure}°` : `${figure} ${unit.symbol}`;
 }

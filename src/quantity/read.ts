@@ -15,10 +15,14 @@ export interface Quantity {
 }
 
 const NUMBER =
-  /^([-+]?)(\d+(?:\.\d*)?|\.\d+)(?:[eE]([-+]?\d{1,4})|[×x]10(?:\^)?([⁻⁺⁰¹²³⁴-⁹]{1,5}|[-+]?\d{1,4}))?/;
-const FEET_AND_INCHES =
-  /^([-+]?)(\d+)\s*(?:ft|'|′)[\s-]*(?:(\d+(?:\.\d+)?)(?:\s+(\d+)\/(\d+))?|(\d+)\/(\d+))\s*(?:in|"|″)$/;
-const INCHES_AND_FRACTION = /^([-+]?)(?:(\d+)\s+)?(\d+)\/(\d+)\s*(?:in|"|″)$/;
+  /^([-+]?)(\d+(?:\.\d*)?|\.\d+)(?:[eE]([-+]?\d+)|\s*[×x]\s*10(?:\^([-+]?\d+)|([⁻⁺]?[⁰¹²³⁴-⁹]+)))?/;
+const FEET = String.raw`\s*(?:ft|foot|feet|'|′)`;
+const INCHES = String.raw`\s*(?:in|inch|inches|"|″)`;
+const FRACTION = String.raw`(\d+)/(\d+)`;
+const FEET_AND_INCHES = new RegExp(
+  String.raw`^([-+]?)(\d+)${FEET}[\s-]*(?:(\d+(?:\.\d+)?)(?:\s+${FRACTION})?|${FRACTION})${INCHES}$`,
+);
+const INCHES_AND_FRACTION = new RegExp(String.raw`^([-+]?)(?:(\d+)\s+)?${FRACTION}${INCHES}$`);
 const SUPERSCRIPTS = '⁰¹²³⁴⁵⁶⁷⁸⁹';
 
 /**
@@ -47,16 +51,20 @@ export function readQuantity(text: string): Quantity {
       `"${clip(text)}" has a comma: write the decimal sign as a point and no thousands`,
     );
   }
-  const raised = (match[4] ?? '').replace(/[⁰¹²³⁴-⁹]/g, (digit) => String(SUPERSCRIPTS.indexOf(digit)));
-  const exponent = match[3] ?? raised.replace('⁻', '-').replace('⁺', '');
-  const figure = Number(`${match[1]}${match[2]}${exponent === '' ? '' : `e${exponent}`}`);
-  if (!Number.isFinite(figure)) throw new QuantityError(`"${clip(text)}" is too large a figure`);
+  const raised = (match[5] ?? '')
+    .replace(/[⁰¹²³⁴-⁹]/g, (digit) => String(SUPERSCRIPTS.indexOf(digit)))
+    .replace('⁻', '-')
+    .replace('⁺', '+');
+  const exponent = match[3] ?? match[4] ?? raised;
+  const figure = finite(Number(`${match[1]}${match[2]}${exponent === '' ? '' : `e${exponent}`}`), text);
   const symbol = rest.trim();
   const unit = symbol === '' ? PLAIN : findUnit(symbol);
-  if (unit === undefined) throw new QuantityError(`"${clip(symbol)}" is no unit that is known here`);
-  const value = figure * unit.factor;
-  if (!Number.isFinite(value)) throw new QuantityError(`"${clip(text)}" is too large a figure`);
-  return { value, unit };
+  if (unit === undefined) {
+    throw new QuantityError(
+      `"${clip(symbol)}" is no unit that is known here: write for example m, ft, kN, kip or °`,
+    );
+  }
+  return { value: finite(figure * unit.factor, text), unit };
 }
 
 function readFeetAndInches(tidy: string): Quantity | undefined {
@@ -71,7 +79,7 @@ function readFeetAndInches(tidy: string): Quantity | undefined {
   if (Number(below) === 0) throw new QuantityError(`"${clip(tidy)}" divides an inch by nothing`);
   const total = Number(feet) * 12 + Number(whole) + Number(above) / Number(below);
   const value = (sign === '-' ? -total : total) * 0.0254;
-  return { value, unit: findUnit(both !== null ? 'ft' : 'in') ?? PLAIN };
+  return { value: finite(value, tidy), unit: findUnit(both !== null ? 'ft' : 'in') ?? PLAIN };
 }
 
 /**
@@ -88,10 +96,10 @@ export function readMeasure(text: string, wanted: Measure, assume?: System): Qua
     if (assume === undefined) {
       const gap = unit.symbol === '°' ? '' : ' ';
       throw new QuantityError(
-        `"${clip(text)}" has no unit where ${wanted.called} is wanted: write for example "${text.trim()}${gap}${unit.symbol}"`,
+        `"${clip(text)}" has no unit where ${wanted.called} is wanted: write for example "${clip(text.trim())}${gap}${unit.symbol}"`,
       );
     }
-    return { value: found.value * unit.factor, unit };
+    return { value: finite(found.value * unit.factor, text), unit };
   }
   if (found.unit.dimension !== wanted.dimension || found.unit.angular !== (wanted.name === 'angle')) {
     const is = found.unit.angular ? 'an angle' : nameDimension(found.unit.dimension);
@@ -102,6 +110,12 @@ export function readMeasure(text: string, wanted: Measure, assume?: System): Qua
     throw new QuantityError(`"${clip(text)}" is ${is} where ${wanted.called} is wanted${hint}`);
   }
   return found;
+}
+
+/** The value, where it is one: a figure that is too large for the machine would pass for infinity. */
+function finite(value: number, text: string): number {
+  if (!Number.isFinite(value)) throw new QuantityError(`"${clip(text)}" is too large a figure`);
+  return value;
 }
 
 function clip(text: string): string {

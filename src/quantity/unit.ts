@@ -92,7 +92,7 @@ const LOWERED: Record<string, string> = {
   '⁹': '9',
 };
 
-const FACTOR = /^([^\d\s^*·/.⁻⁰¹²³⁴-⁹-]+)(?:\^?(-?\d{1,2}(?:\.\d{1,3})?)|([⁻⁰¹²³⁴-⁹]{1,3}))?$/;
+const FACTOR = /^([^\d\s^*·/.⁻⁰¹²³⁴-⁹-]+)(?:\^?(-?\d{1,2}(?:\.\d+)?)|([⁻⁰¹²³⁴-⁹]{1,3}))?$/;
 
 /**
  * Reads a unit such as `kN/m²`, `kN·m`, `kip*ft`, `m^2`. Everything behind the first slash divides.
@@ -104,10 +104,11 @@ export function findUnit(text: string): Unit | undefined {
   const [above = '', ...below] = text.split('/');
   let factor = 1;
   let dim = NONE;
-  let angular = false;
+  let angle = 0;
   for (const [part, sign] of [[above, 1] as const, ...below.map((part) => [part, -1] as const)]) {
-    for (const piece of part.split(/[*·⋅\s]+/)) {
-      if (piece === '1' && part === above) continue;
+    // "1/m" has nothing above its slash; anywhere else a 1 is a figure that went astray.
+    if (sign === 1 && part.trim() === '1' && below.length > 0) continue;
+    for (const piece of part.trim().split(/[*·⋅\s]+/)) {
       const match = FACTOR.exec(piece);
       const unit = match === null ? undefined : units.get(match[1] ?? '');
       if (match === null || unit === undefined) return undefined;
@@ -116,8 +117,10 @@ export function findUnit(text: string): Unit | undefined {
       if (!Number.isFinite(exponent)) return undefined;
       factor *= unit.factor ** exponent;
       dim = productDimension(dim, powerDimension(unit.dimension, exponent));
-      angular ||= unit.angular;
+      if (unit.angular) angle += exponent;
     }
   }
-  return { symbol: text, factor, dimension: dim, angular: angular && dim === NONE };
+  // Powers that leave the range of the machine would turn every figure into 0 or infinity.
+  if (factor === 0 || !Number.isFinite(factor)) return undefined;
+  return { symbol: text, factor, dimension: dim, angular: angle === 1 && dim === NONE };
 }

@@ -31,8 +31,8 @@ function everything(): GraphDocument {
         { id: 'p', type: 'setting-out/point' },
         { id: 't', type: 'setting-out/turn', place: [3, 4] },
       ],
-      ['a.value > p.up', 'b.value > p.across', 'p.point > t.point'],
-      ['b', 'a'],
+      ['a.value > p.up', 'b.value > p.across', 'p.point > t.point', 'gone.point > t.centre'],
+      ['b', 'gone', 'a'],
     ),
     // A file may hold one link twice, with members of their own.
     remark: 'kept',
@@ -50,6 +50,7 @@ function deepFreeze(value: unknown): unknown {
 const edits: readonly (readonly [what: string, edit: Edit])[] = [
   ['a node more', { edit: 'add-node', node: { id: 'n', type: 'x/y' } }],
   ['a node more, among others', { edit: 'add-node', node: { id: 'n', type: 'x/y' }, at: 1 }],
+  ['a node that links and the rail name already', { edit: 'add-node', node: { id: 'gone', type: 'x/y' } }],
   ['another name', { edit: 'change-node', node: { id: 'a', type: 'quantities/length', name: 'Rise' } }],
   ['another figure', { edit: 'set-value', id: 'a', input: 'value', text: '4 m' }],
   ['a figure more', { edit: 'set-value', id: 'a', input: 'new', text: '4 m' }],
@@ -122,12 +123,12 @@ describe('removing nodes', () => {
     const before = everything();
     const { document } = apply(before, removalOf(before, new Set(['a', 'p'])));
     expect(document.nodes).toEqual(before.nodes.filter(({ id }) => id === 'b' || id === 't'));
-    expect(document.links).toEqual([]);
-    expect(document.rail).toEqual(['b']);
+    expect(document.links).toEqual([linkOf('gone.point > t.centre')]);
+    expect(document.rail).toEqual(['b', 'gone']);
   });
 
   it('that are not there is refused', () => {
-    expect(() => apply(everything(), removalOf(everything(), new Set(['gone'])))).toThrow(EditError);
+    expect(() => apply(everything(), removalOf(everything(), new Set(['missing'])))).toThrow(EditError);
   });
 });
 
@@ -140,8 +141,8 @@ describe('an edit that does not fit', () => {
     ],
     [
       'a change of no node',
-      { edit: 'change-node', node: { id: 'gone', type: 'x/y' } },
-      'there is no node "gone"',
+      { edit: 'change-node', node: { id: 'missing', type: 'x/y' } },
+      'there is no node "missing"',
     ],
     [
       'a setting of no node',

@@ -7,11 +7,15 @@ import { builtIn } from '../../nodes/index.ts';
 import {
   apply,
   documentSchema,
+  type Edit,
   FileError,
   FORMAT_VERSION,
   type GraphDocument,
   LIMITS,
+  type Link,
+  type NodeRecord,
   readGraph,
+  readings,
   Session,
   writeGraph,
 } from '../../src/graph/index.ts';
@@ -43,6 +47,39 @@ describe('reading a file', () => {
       'has version 99 of the format, and versions up to 2 are read here',
     ],
     ['no version', text({ version: 'new' }), 'version must be a whole number'],
+    ['version 0', text({ version: 0 }), 'version must be a whole number from 1 to 2'],
+    ['half a version', text({ version: 1.5 }), 'version must be a whole number from 1 to 2'],
+    ['bad JSON on several lines', '{"a":\n\n  bad\u001b[2J}', 'the file is not JSON: Unexpected token'],
+    [
+      'two nodes of an id of two lines',
+      text({ nodes: [1, 2].map(() => ({ id: 'a\nb\u2028c\u001b', type: 'x/y' })) }),
+      'two nodes have the id "a b c "',
+    ],
+    ['a whole text for the nodes', text({ nodes: 'x\n'.repeat(1e6) }), 'nodes: Invalid type'],
+    ['a very long title', text({ title: 'x'.repeat(10_001) }), 'title'],
+    ['a very long id', text({ nodes: [{ id: 'x'.repeat(201), type: 'x/y' }] }), 'nodes.0.id'],
+    [
+      'a very long figure',
+      text({ nodes: [{ id: 'a', type: 'x/y', values: { value: '1'.repeat(201) } }] }),
+      'nodes.0.values.value',
+    ],
+    [
+      'a very long setting',
+      text({ nodes: [{ id: 'a', type: 'x/y', settings: { formula: 'a'.repeat(10_001) } }] }),
+      'nodes.0.settings.formula',
+    ],
+    [
+      'a setting that is a figure',
+      text({ nodes: [{ id: 'a', type: 'x', settings: { b: 3 } }] }),
+      'settings.b',
+    ],
+    ['a rail of figures', text({ rail: ['a', 3] }), 'rail.1'],
+    ['packs of lists', text({ packs: { arch: ['1'] } }), 'packs.arch'],
+    [
+      'an infinite figure where nothing is known',
+      text({ extra: 0 }).replace('"extra":0', '"extra":[{"deep":-1e999}]'),
+      'too large',
+    ],
     ['no nodes', text({ nodes: undefined }), 'nodes'],
     ['a node without a type', text({ nodes: [{ id: 'a' }] }), 'nodes.0.type'],
     ['a node without an id', text({ nodes: [{ id: '', type: 'x/y' }] }), 'nodes.0.id'],
@@ -84,7 +121,8 @@ describe('reading a file', () => {
       message = (error as Error).message;
     }
     expect(message).toContain(words);
-    expect(message).not.toContain('\n');
+    // One line that a terminal shows as it is.
+    expect(message).toMatch(/^[^\p{Cc}\p{Zl}\p{Zp}]{10,400}$/u);
   });
 
   it('takes a byte order mark', () => {
@@ -121,6 +159,39 @@ describe('what a file holds that is not known here', () => {
     });
     const again = JSON.parse(writeGraph(document));
     expect(again).toEqual(JSON.parse(content.replace('3 m', '4 m')));
+  });
+
+  it('stays through every edit that does not take it out', () => {
+    const content = text({
+      drawn: { by: 'hand' },
+      nodes: [
+        { ...small.nodes[0], settings: { lower: '1 m' }, colourless: true },
+        { id: 'p', type: 'setting-out/point', kept: [null] },
+      ],
+      links: [{ from: ['a', 'value'], to: ['p', 'up'], since: 3 }],
+      trailing: null,
+    });
+    const session = new Session(readGraph(content), builtIn);
+    const [first] = session.document.nodes;
+    const link: Link = { from: ['a', 'value'], to: ['p', 'across'] };
+    const edits: Edit[] = [
+      { edit: 'set-value', id: 'a', input: 'value', text: '5 m' },
+      { edit: 'set-setting', id: 'a', setting: 'upper', value: '9 m' },
+      { edit: 'change-node', node: { ...(first as NodeRecord), name: 'Rise' } },
+      { edit: 'add-link', link },
+      { edit: 'remove-link', link },
+      { edit: 'add-node', node: { id: 'n', type: 'x/y' } },
+      { edit: 'set-rail', rail: [] },
+      { edit: 'set-member', member: 'title', value: 'Another' },
+    ];
+    for (const edit of edits) session.edit(edit);
+    const saved = JSON.parse(writeGraph(readGraph(writeGraph(session.document))));
+    expect(saved).toMatchObject({ drawn: { by: 'hand' }, trailing: null });
+    expect(saved.nodes[0]).toMatchObject({ colourless: true, name: 'Rise' });
+    expect(saved.nodes[1].kept).toEqual([null]);
+    expect(saved.links).toEqual([{ from: ['a', 'value'], to: ['p', 'up'], since: 3 }]);
+    while (session.canUndo) session.undo();
+    expect(writeGraph(session.document)).toBe(writeGraph(readGraph(content)));
   });
 
   it('stays where no pack has a node', () => {
@@ -166,9 +237,31 @@ describe('a file of an earlier version', () => {
     expect(session.value('top', 'point')).toEqual({ x: 0, y: 7.5 });
   });
 
+  it('gives the moment that it gave, and saves as the present version with all that it held', () => {
+    const document = readGraph(read('tests/fixtures/version-1-barn.skewback.json'));
+    const session = new Session(document, builtIn);
+    expect(session.queries).toEqual([]);
+    // Statics by hand: the thrust is 10 · 3 / (2 · 7) kN, and four metres of column make a moment of it.
+    const [reading] = readings(session);
+    expect(reading?.value).toBeCloseTo((-4 * 10_000 * 3) / (2 * 7), 8);
+    const saved = JSON.parse(writeGraph(document));
+    expect(saved.version).toBe(FORMAT_VERSION);
+    expect(saved.kept).toEqual({ of: 'version 1' });
+    expect(saved.links[3]).toEqual({ from: ['c', 'point'], to: ['crown', 'point'], drawn: 'by hand' });
+    expect(readGraph(JSON.stringify(saved))).toEqual(document);
+  });
+
   it('is not of the present version by itself', () => {
     expect(() => readGraph(old.replace('"version": 1', '"version": 2'))).toThrow('links.0');
   });
+});
+
+it('what is written reads back the same, whatever signs are in it', () => {
+  const signs = 'quotes " \\ \u0000 \u001b \u2028 \ud800 é 𝑎';
+  const document = { ...small, title: signs, [signs]: { [signs]: [signs, -0.1, 1e21, 5e-324, true, null] } };
+  const written = writeGraph(document as unknown as GraphDocument);
+  expect(readGraph(written)).toEqual(document);
+  expect(writeGraph(readGraph(written))).toBe(written);
 });
 
 it('an empty list and an empty object are written as such', () => {

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import type { NodeRecord } from '../../src/graph/index.ts';
+import { type NodeRecord, sliders } from '../../src/graph/index.ts';
+import { queryText } from '../../src/tape/index.ts';
 import { everyFigure, open, texts } from '../support/graphs.ts';
 
 const length = (id: string, value = '3 m'): NodeRecord => ({
@@ -172,6 +173,91 @@ describe('what is wrong with a graph', () => {
     const session = open(nodes, links);
     expect(texts(session)).toEqual(expected);
     expect(session.document.nodes).toHaveLength(nodes.length);
+  });
+
+  it('on the rail is said of the graph, and the rest of the rail stands', () => {
+    const session = open([length('a')], [], ['gone', 'a']);
+    expect(texts(session)).toEqual([
+      'graph: The rail names a node "gone" that the graph does not have: take it off the rail',
+    ]);
+    expect(sliders(session).map(({ id }) => id)).toEqual(['a']);
+  });
+
+  it('calls nodes by the names that people gave them', () => {
+    const session = open(
+      [
+        { ...length('a'), name: 'Rise' },
+        point('p'),
+        { ...formula('f', 'x + 1'), name: 'First' },
+        { ...formula('g', 'x + 1'), name: 'Second' },
+      ],
+      ['a.height > p.up', 'f.result > g.x', 'g.result > f.x'],
+    );
+    expect(texts(session)[0]).toContain('that "Rise" does not have');
+    expect(texts(session)[1]).toMatch(/\("(First" → "Second" → "First|Second" → "First" → "Second)"\)/);
+  });
+
+  it('is all told at once where a node has several faults', () => {
+    const session = open(
+      [length('a'), { id: 'f', type: 'quantities/force' }, { id: 'c', type: 'setting-out/circle' }],
+      ['f.value > c.centre', 'a.value > c.radius', 'a.value > c.radius', 'a.value > c.colour'],
+    );
+    expect(session.queries.map(({ owner, code }) => `${owner} ${code}`).toSorted()).toEqual([
+      'c no-input',
+      'c too-many-links',
+      'c wrong-kind',
+    ]);
+  });
+
+  it('is none where one kind stands for another', () => {
+    const session = open(
+      [
+        { id: 'n', type: 'quantities/count', values: { value: '3' } },
+        { id: 't', type: 'virtual-work/perturbation' },
+        length('a'),
+        formula('f', 'a * n'),
+        point('p'),
+        point('q'),
+        { id: 'r', type: 'setting-out/turn' },
+        { id: 'm', type: 'setting-out/point-at-ratio' },
+        { id: 'c', type: 'setting-out/chord' },
+      ],
+      [
+        ...['a.value > f.a', 'n.value > f.n', 'f.result > q.across', 'f.result > p.up'],
+        ...['p.point > r.point', 'q.point > r.centre', 't.turn > r.angle'],
+        ...['p.point > c.from', 'q.point > c.to', 'c.chord > m.chord', 'n.value > m.ratio'],
+      ],
+    );
+    expect(texts(session)).toEqual([]);
+    expect(session.value('m', 'point')).toEqual({ x: 27, y: -18 });
+  });
+
+  it('has its amount in the units that are asked for, follows the figures, and goes when they fit', () => {
+    const session = open(
+      [
+        point('p'),
+        { id: 'q', type: 'setting-out/point', values: { across: '7 m' } },
+        { id: 'c', type: 'setting-out/circle', values: { radius: '3 m' } },
+        { id: 'd', type: 'setting-out/circle', values: { radius: '3 m' } },
+        { id: 'm', type: 'setting-out/circles-meet', settings: { branch: 'left' } },
+        point('after'),
+        { id: 'e', type: 'setting-out/chord' },
+      ],
+      [
+        ...['p.point > c.centre', 'q.point > d.centre', 'c.circle > m.first', 'd.circle > m.second'],
+        ...['m.point > e.from', 'after.point > e.to'],
+      ],
+    );
+    const say = (system: 'SI' | 'US') => session.queries.map((query) => queryText(query, system));
+    expect(session.queries.map(({ owner, code }) => [owner, code])).toEqual([['m', 'circles-apart']]);
+    expect(say('SI')[0]).toMatch(/miss each other by 1\.000\u00a0m: /);
+    expect(say('US')[0]).toMatch(/miss each other by 3\.281\u00a0ft: /);
+    expect(session.state('e')).toBe('waits');
+    session.edit({ edit: 'set-value', id: 'q', input: 'across', text: '6.25 m' });
+    expect(say('SI')[0]).toMatch(/by 0\.2500\u00a0m: /);
+    session.edit({ edit: 'set-value', id: 'q', input: 'across', text: '4 m' });
+    expect(say('SI')).toEqual([]);
+    expect(['m', 'e'].map((id) => session.state(id))).toEqual(['ready', 'ready']);
   });
 
   it('on a loop of three names them, and what reads from it waits', () => {

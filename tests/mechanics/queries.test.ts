@@ -261,7 +261,7 @@ describe('a moment wired by hand', () => {
     const { trace, work } = lever((p) => p, 0);
     const { limit, finite } = work();
     expect(outcome(trace, [limit]).values[0]).toBeCloseTo(20_000, 9);
-    expect(outcome(trace, [finite]).queries[0]).toContain('The perturbation is 0: give it a size');
+    expect(outcome(trace, [finite]).queries[0]).toContain('The perturbation is 0°: give it a size');
   });
 
   it('takes as many moved points as loads', () => {

@@ -3,7 +3,16 @@ import { builtIn } from '../../nodes/index.ts';
 import { BANDS, type NodeType, resolve, Session, scalarsIn } from '../../src/graph/index.ts';
 import { evaluate, finish } from '../../src/tape/index.ts';
 import { graphOf } from '../support/graphs.ts';
-import { slopeGap, statedFigures, traceExample, unitGap } from '../support/laws.ts';
+import {
+  slopeGap,
+  statedFigures,
+  type TracedExample,
+  traceExample,
+  traceSurroundings,
+  unitGap,
+} from '../support/laws.ts';
+import { randomFrom } from '../support/random.ts';
+import { NOT_OUR_WORDS } from '../support/words.ts';
 
 const alone = builtIn.nodes.filter(({ example }) => example.around === undefined);
 const within = builtIn.nodes.filter(({ example }) => example.around !== undefined);
@@ -12,18 +21,41 @@ const named = (nodes: readonly NodeType[]) => nodes.map((node) => [node.type, no
 /** Rounding of a few hundred operations on figures of a building. */
 const ROUNDING = 1e-12;
 
+function holdsLaws(traced: TracedExample): void {
+  it('is the same in other units', () => {
+    const random = randomFrom(17);
+    for (let i = 0; i < 5; i++) {
+      const unit = (): number => 10 ** random(-1, 1);
+      expect(unitGap(traced, [unit(), unit(), unit()])).toBeLessThan(1e-9);
+    }
+  });
+
+  it('has the slopes that differences show', () => {
+    // The error of differences: first order in steps of 1e-6 where the mean does not serve, and rounding.
+    expect(slopeGap(traced)).toBeLessThan(5e-5);
+  });
+}
+
 describe.each(named(builtIn.nodes))('%s', (_, node) => {
   it('has a title, one line of help, a band, and an example that states a figure', () => {
     expect(node.title).toMatch(/^\p{Lu}[^!]*$/u);
     expect(node.help).toMatch(/^\p{Lu}[^\n!]*\.$/u);
     expect(BANDS).toContain(node.band);
     expect(Object.keys(node.example.gives).length).toBeGreaterThan(0);
+    for (const output of Object.keys(node.example.gives)) expect(Object.keys(node.outputs)).toContain(output);
+    const parts = [node.inputs, node.settings, node.outputs].flatMap((specs) => Object.values(specs));
+    for (const { title } of parts) {
+      expect(title).toMatch(/^\p{Lu}[^!.]*$/u);
+      expect(title).not.toMatch(NOT_OUR_WORDS);
+    }
+    expect(`${node.title}. ${node.help}`).not.toMatch(NOT_OUR_WORDS);
     expect(node.name).toMatch(/^[a-z]+(-[a-z]+)*$/);
   });
 });
 
 describe.each(named(alone))('the example of %s', (_, node) => {
   const traced = traceExample(node);
+  holdsLaws(traced);
 
   it('comes out as it says', () => {
     for (const output of Object.keys(node.example.gives)) {
@@ -40,18 +72,11 @@ describe.each(named(alone))('the example of %s', (_, node) => {
       }
     }
   });
-
-  it('is the same in other units', () => {
-    expect(unitGap(traced)).toBeLessThan(1e-9);
-  });
-
-  it('has the slopes that differences show', () => {
-    // The error of differences: first order in steps of 1e-6 where the mean does not serve, and rounding.
-    expect(slopeGap(traced)).toBeLessThan(5e-5);
-  });
 });
 
 describe.each(named(within))('the example of %s, in its surroundings', (_, node) => {
+  holdsLaws(traceSurroundings(node));
+
   it('comes out as it says', () => {
     const { nodes = [], links = [] } = node.example.around ?? {};
     const document = { ...graphOf([...nodes, { id: 'this', type: node.type }]), links };

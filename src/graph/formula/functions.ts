@@ -146,7 +146,7 @@ function power(base: Scalar, exponent: Scalar): Scalar {
         'an exponent that varies needs plain numbers: its dimension could not be told. Write the exponent as a figure, or divide the base by its unit',
       );
     }
-    return positive(base, 'power').logarithm().times(exponent).exponential();
+    return positive(base, 'power with a fraction').logarithm().times(exponent).exponential();
   }
   if (exponent.dimension !== NONE) {
     throw new Refusal(
@@ -160,6 +160,6 @@ function power(base: Scalar, exponent: Scalar): Scalar {
       `the exponent ${known} is beyond ±${GREATEST_EXPONENT}: no figure of a building needs it`,
     );
   }
-  if (!Number.isInteger(known)) return positive(base, 'power').power(known);
+  if (!Number.isInteger(known)) return positive(base, 'power with a fraction').power(known);
   return known < 0 ? notZero(base).power(known) : base.power(known);
 }

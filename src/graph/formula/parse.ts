@@ -75,6 +75,7 @@ function allowed(node: MathNode): Expression {
     case 'SymbolNode': {
       const name = String(parts.name);
       if (name === 'pi') return { is: 'number', value: Math.PI };
+      if (functions.has(name)) refuse(`${name} is a function: write ${name}(…)`);
       if (!NAME.test(name)) {
         refuse(`"${clip(name)}" is no name for an input: begin with a letter, use letters, figures and _`);
       }
@@ -96,6 +97,7 @@ function allowed(node: MathNode): Expression {
     case 'FunctionNode': {
       const called = parts.fn as { readonly type?: unknown; readonly name?: unknown };
       const name = called.type === 'SymbolNode' ? String(called.name) : '';
+      if (name === '') return refuse(`${WHAT.AccessorNode} is not allowed in a formula`);
       const known = functions.get(name);
       if (known === undefined) {
         return refuse(
