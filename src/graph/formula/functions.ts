@@ -100,11 +100,15 @@ function notZero(b: Scalar): Scalar {
 }
 
 function squareRoot(a: Scalar): Scalar {
+  return notNegative(a, 'square root').squareRoot();
+}
+
+function notNegative(a: Scalar, what: string): Scalar {
   return guard(
     a,
     a.atLeast(0),
-    say('root-of-negative')`The formula takes the square root of ${a}: make it 0 or more`,
-  ).squareRoot();
+    say('root-of-negative')`The formula takes the ${what} of ${a}: make it 0 or more`,
+  );
 }
 
 function positive(a: Scalar, what: string): Scalar {
@@ -160,6 +164,7 @@ function power(base: Scalar, exponent: Scalar): Scalar {
       `the exponent ${known} is beyond ±${GREATEST_EXPONENT}: no figure of a building needs it`,
     );
   }
-  if (!Number.isInteger(known)) return positive(base, 'power with a fraction').power(known);
+  if (!Number.isInteger(known) && known < 0) return positive(base, 'power with a fraction').power(known);
+  if (!Number.isInteger(known)) return notNegative(base, 'power with a fraction').power(known);
   return known < 0 ? notZero(base).power(known) : base.power(known);
 }
