@@ -11,8 +11,8 @@ export interface Place {
   readonly point: Point;
   /** Direction of the axis there, from left to right, of length 1. */
   readonly direction: Vector;
-  /** The segment it lies in, where that is known while tracing and not only when the tape runs. */
-  readonly segment?: number;
+  /** The segment it lies in, and how far along it, where that is known while tracing and not only in a run. */
+  readonly on?: { readonly segment: number; readonly ratio: Scalar };
 }
 
 /** The place at a ratio of the way along a segment, which is numbered from 0. */
@@ -26,7 +26,7 @@ export function placeOnSegment(arch: Arch, segment: number, ratio: Scalar): Plac
     );
   }
   const along = start.plus(found.length.times(ratio));
-  return { along, point: found.pointAt(ratio), direction: found.directionAt(ratio), segment };
+  return { along, point: found.pointAt(ratio), direction: found.directionAt(ratio), on: { segment, ratio } };
 }
 
 /** The place at a knee, counted from 1 at the left springing: the end of the segment to its left. */
@@ -108,16 +108,17 @@ export function placeNearest(arch: Arch, point: Point): { readonly place: Place;
  * Known while tracing if segments tell.
  */
 export function isBefore(a: Place, b: Place): Condition {
-  if (a.segment !== undefined && b.segment !== undefined && a.segment !== b.segment) {
-    return new Condition(a.along.trace.constant(a.segment < b.segment ? 1 : 0, NONE));
-  }
-  return a.along.below(b.along.times(1 - SAME_PLACE));
+  if (a.on === undefined || b.on === undefined) return a.along.below(b.along.times(1 - SAME_PLACE));
+  if (a.on.segment === b.on.segment) return a.on.ratio.below(b.on.ratio.times(1 - SAME_PLACE));
+  return known(a, a.on.segment < b.on.segment);
 }
 
 /** Whether a place belongs to the left half. The crown hinge itself counts as its end. */
 export function isLeft(arch: Arch, place: Place): Condition {
-  if (place.segment !== undefined) {
-    return new Condition(place.along.trace.constant(place.segment < arch.leftSegments ? 1 : 0, NONE));
-  }
+  if (place.on !== undefined) return known(place, place.on.segment < arch.leftSegments);
   return place.along.atMost(crownStart(arch).times(1 + SAME_PLACE));
+}
+
+function known(place: Place, holds: boolean): Condition {
+  return new Condition(place.along.trace.constant(holds ? 1 : 0, NONE));
 }
