@@ -125,6 +125,7 @@ class GraphTracer {
       outputs = given;
     });
     this.trace.owner = undefined;
+    this.checkNames(record, type);
     this.keep(record, type, inputs, outputs);
   }
 
@@ -136,6 +137,30 @@ class GraphTracer {
   ): void {
     const sources = (this.linksInto.get(record.id) ?? []).map(({ from }) => from[0]);
     this.nodes.set(record.id, { record, type, inputs, sources, outputs });
+  }
+
+  /** What is written for a setting or an input that the node does not have would do nothing, and nobody would know. */
+  private checkNames(record: NodeRecord, type: NodeType): void {
+    for (const name of Object.keys(record.settings ?? {})) {
+      if (Object.hasOwn(type.settings, name)) continue;
+      const known = Object.keys(type.settings).join(', ') || 'none';
+      this.query(
+        record.id,
+        'no-setting',
+        `A setting "${name}" is written that the node does not have: it has ${known}`,
+      );
+    }
+    // The inputs of a formula come and go with its text, and what was typed into them is kept.
+    if (type.moreInputs !== undefined) return;
+    for (const name of Object.keys(record.values ?? {})) {
+      if (Object.hasOwn(type.inputs, name)) continue;
+      const known = Object.keys(type.inputs).join(', ') || 'none';
+      this.query(
+        record.id,
+        'no-input',
+        `A figure is written for an input "${name}" that the node does not have: it has ${known}`,
+      );
+    }
   }
 
   /** Throws where a node does not give what it declares: that is a query here, and not at the next node. */

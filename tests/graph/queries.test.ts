@@ -123,6 +123,18 @@ describe('what is wrong with a graph', () => {
       ['r: Setting "Kind of limit" is "sometimes", but must be one of none, at most, at least, target'],
     ],
     [
+      'a setting of another name',
+      [{ id: 'r', type: 'quantities/reading', values: { value: '3 m' }, settings: { rul: 'at most' } }],
+      [],
+      ['r: A setting "rul" is written that the node does not have: it has rule'],
+    ],
+    [
+      'a figure for an input of another name',
+      [{ id: 'p', type: 'setting-out/point', values: { upp: '3 m' } }],
+      [],
+      ['p: A figure is written for an input "upp" that the node does not have: it has across, up'],
+    ],
+    [
       'a limit of another dimension',
       [
         {
