@@ -1,5 +1,6 @@
 import { defineNode, kinds, many, output } from '../../src/graph/index.ts';
 import { archThrough, axisLength, crownStart, hingeRise, span } from '../../src/mechanics/index.ts';
+import { smallArch } from './example-arch.ts';
 import { arch, keyPoint } from './kinds.ts';
 
 export const axis = defineNode({
@@ -27,12 +28,7 @@ export const axis = defineNode({
   },
   example: {
     inputs: {
-      keyPoints: [
-        ['springing', ['0 m', '0 m']],
-        ['knee', ['0 m', '4 m']],
-        ['crown', ['3 m', '8 m']],
-        ['springing', ['6 m', '0 m']],
-      ],
+      keyPoints: smallArch,
     },
     gives: { span: '6 m', rise: '8 m', leftLength: '9 m' },
   },

@@ -24,3 +24,11 @@ export const exampleLoads: Literal = [
 export const exampleThrust = '2.142857142857143 kN';
 /** 4 m of column times the thrust; the extrados is in tension. */
 export const exampleKneeMoment = '-8.571428571428571 kN*m';
+
+/** An arch with a column and a rafter of 4 m and 5 m on its left, for examples of axes and stations. */
+export const smallArch: Literal = [
+  ['springing', ['0 m', '0 m']],
+  ['knee', ['0 m', '4 m']],
+  ['crown', ['3 m', '8 m']],
+  ['springing', ['6 m', '0 m']],
+];

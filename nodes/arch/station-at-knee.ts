@@ -1,6 +1,7 @@
 import { defineNode, input, kinds, output } from '../../src/graph/index.ts';
 import { kneePlace } from '../../src/mechanics/index.ts';
 import { point } from '../setting-out/kinds.ts';
+import { smallArch } from './example-arch.ts';
 import { arch, station } from './kinds.ts';
 
 export const stationAtKnee = defineNode({
@@ -16,12 +17,7 @@ export const stationAtKnee = defineNode({
   },
   example: {
     inputs: {
-      arch: [
-        ['springing', ['0 m', '0 m']],
-        ['knee', ['0 m', '4 m']],
-        ['crown', ['3 m', '8 m']],
-        ['springing', ['6 m', '0 m']],
-      ],
+      arch: smallArch,
       knee: '1',
     },
     gives: { point: ['0 m', '4 m'] },

@@ -1,6 +1,7 @@
 import { defineNode, input, kinds, output } from '../../src/graph/index.ts';
 import { placeOnSegment } from '../../src/mechanics/index.ts';
 import { point } from '../setting-out/kinds.ts';
+import { smallArch } from './example-arch.ts';
 import { arch, station } from './kinds.ts';
 
 export const stationOnSegment = defineNode({
@@ -20,12 +21,7 @@ export const stationOnSegment = defineNode({
   },
   example: {
     inputs: {
-      arch: [
-        ['springing', ['0 m', '0 m']],
-        ['knee', ['0 m', '4 m']],
-        ['crown', ['3 m', '8 m']],
-        ['springing', ['6 m', '0 m']],
-      ],
+      arch: smallArch,
       segment: '2',
       ratio: '0.5',
     },
