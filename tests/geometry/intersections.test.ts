@@ -9,29 +9,18 @@ import {
   pointOnArc,
 } from '../../src/geometry/index.ts';
 import { LENGTH, NONE } from '../../src/quantity/index.ts';
-import {
-  derivative,
-  failedGuards,
-  finish,
-  queryText,
-  registersFor,
-  run,
-  type Scalar,
-  Trace,
-} from '../../src/tape/index.ts';
+import { derivative, type Scalar, type Trace } from '../../src/tape/index.ts';
+import { construction as construct, type Outcome } from '../support/construction.ts';
 
-/** A construction on a trace that is run at many places: its figures and the texts of its queries. */
-function construction(count: number, build: (inputs: Scalar[], trace: Trace) => readonly Scalar[]) {
-  const trace = new Trace();
-  const inputs = Array.from({ length: count }, (_, i) => trace.input(`input ${i}`, LENGTH));
-  const tape = finish(trace, build(inputs, trace));
-  const registers = registersFor(tape);
-  return (...values: number[]) => {
-    run(tape, values, registers);
-    return {
-      values: Array.from(tape.outputs, (register) => registers[register] as number),
-      queries: failedGuards(tape, registers).map((query) => queryText(query)),
-    };
+/** A construction from so many lengths, to be run at many places. */
+function construction(
+  count: number,
+  build: (inputs: Scalar[], trace: Trace) => readonly Scalar[],
+): (...values: number[]) => Pick<Outcome, 'values' | 'queries'> {
+  const made = construct(new Array(count).fill(LENGTH), (inputs, trace) => build([...inputs], trace));
+  return (...lengths) => {
+    const { values, queries } = made(...lengths);
+    return { values, queries };
   };
 }
 

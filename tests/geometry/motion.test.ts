@@ -10,16 +10,8 @@ import {
   turnOf,
 } from '../../src/geometry/index.ts';
 import { NONE } from '../../src/quantity/index.ts';
-import {
-  evaluate,
-  failedGuards,
-  finish,
-  queryText,
-  registersFor,
-  run,
-  type Scalar,
-  Trace,
-} from '../../src/tape/index.ts';
+import { evaluate, finish, type Scalar, Trace } from '../../src/tape/index.ts';
+import { prepared } from '../support/construction.ts';
 import { randomFrom } from '../support/random.ts';
 
 function figures(trace: Trace, scalars: readonly Scalar[]): number[] {
@@ -56,10 +48,7 @@ describe('a rigid motion', () => {
       { from: at(trace, 0, 0), to: at(trace, 4, 0) },
       { from: at(trace, 0, 0), to: at(trace, 0, 4.25) },
     );
-    const tape = finish(trace, [moved(motion, at(trace, 1, 1)).x]);
-    const registers = registersFor(tape);
-    run(tape, [], registers);
-    expect(failedGuards(tape, registers).map((query) => queryText(query))).toEqual([
+    expect(prepared(trace, [moved(motion, at(trace, 1, 1)).x])().queries).toEqual([
       'The chord changes its length by 0.2500\u00a0m when it is moved: a rigid group keeps its shape, so make both chords equally long',
     ]);
   });

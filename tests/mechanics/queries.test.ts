@@ -12,26 +12,13 @@ import {
   virtualWorkMoment,
 } from '../../src/mechanics/index.ts';
 import { FORCE, LENGTH, NONE } from '../../src/quantity/index.ts';
-import {
-  failedGuards,
-  finish,
-  queryText,
-  registersFor,
-  run,
-  type Scalar,
-  Trace,
-} from '../../src/tape/index.ts';
+import { type Scalar, Trace } from '../../src/tape/index.ts';
+import { type Outcome, prepared } from '../support/construction.ts';
 
 type Role = KeyPoint['role'];
 
-function outcome(trace: Trace, scalars: readonly Scalar[]) {
-  const tape = finish(trace, scalars);
-  const registers = registersFor(tape);
-  run(tape, [], registers);
-  return {
-    values: Array.from(tape.outputs, (register) => registers[register] as number),
-    queries: failedGuards(tape, registers).map((query) => queryText(query)),
-  };
+function outcome(trace: Trace, scalars: readonly Scalar[]): Outcome {
+  return prepared(trace, scalars)();
 }
 
 function archOf(trace: Trace, ...points: readonly (readonly [Role, number, number])[]) {
